@@ -1,0 +1,61 @@
+import { closeSync, fsyncSync, openSync, readFileSync, writeSync } from 'node:fs'
+import { join } from 'node:path'
+import { InputError } from '../model/errors.ts'
+import type { ScenarioDocument } from '../model/scenario/schema.ts'
+import type { ModelIdentity } from './modelIdentity.ts'
+
+export const RUN_FORMAT = 'mesofrost-run'
+
+/** `run.json`: what was run, by which program, and how it went. The only output file that knows the clock. */
+export interface RunRecord {
+  format: typeof RUN_FORMAT
+  formatVersion: 1
+  /** Only a finished run has a final directory; the others name the partial one they left. */
+  status: 'finished' | 'interrupted' | 'failed'
+  name: string
+  title: string
+  /** The complete scenario as one may write it: every default filled in, every file's content inlined. */
+  scenario: ScenarioDocument
+  identity: { run: string; model: ModelIdentity; node: string; platform: string }
+  /** The saved state that the run went on from, which is the first of its own state.arrow; null at the start. */
+  continuedFrom: { directory: string; time_h: number } | null
+  seeds: Record<string, number>
+  breakPoints_h: number[]
+  solver: unknown
+  warnings: string[]
+  summary: Record<string, number | null>
+  /** What stopped the run, when it did not finish. */
+  failure: string | null
+  startedAt: string
+  finishedAt: string
+  wallClock_s: number
+}
+
+export function writeRunRecord(directory: string, record: RunRecord): void {
+  const bytes = Buffer.from(`${JSON.stringify(record, null, 2)}\n`)
+  const descriptor = openSync(join(directory, 'run.json'), 'w')
+  try {
+    for (let written = 0; written < bytes.length; )
+      written += writeSync(descriptor, bytes, written, bytes.length - written)
+    fsyncSync(descriptor)
+  } finally {
+    closeSync(descriptor)
+  }
+}
+
+/** The run record in a file; null when the file holds something else. */
+export function findRunRecord(path: string): RunRecord | null {
+  try {
+    const record = JSON.parse(readFileSync(path, 'utf8'))
+    return record?.format === RUN_FORMAT ? record : null
+  } catch {
+    return null
+  }
+}
+
+export function readRunRecord(directory: string): RunRecord {
+  const record = findRunRecord(join(directory, 'run.json'))
+  if (record === null)
+    throw new InputError(`${directory} is not a run directory: it holds no run.json of mesofrost`)
+  return record
+}

@@ -1,0 +1,242 @@
+import type { AltitudeGrid } from '../grid.ts'
+import { readHermite } from '../numerics/hermite.ts'
+import type { Perturbation, PerturbedQuantity, Scenario } from '../scenario/types.ts'
+import { type AirState, makeAirState } from './airState.ts'
+import { readInjectionRates } from './injection.ts'
+import { altitudeWeight, perturbed, timeEdges, timeStrength } from './perturbation.ts'
+import { type ProfileSeries, profileCurve, profileSeries } from './profileSeries.ts'
+import { type RestingAir, restingAir } from './restingAir.ts'
+import { LARGEST_STRETCHING, type WaveField, waveField } from './waveField.ts'
+
+/** Air in balance at one time of the run, and the waves that it carries. */
+export interface AirBasis {
+  time_s: number
+  rest: RestingAir
+  waves: WaveField
+}
+
+/** A span of time without break points inside: steps and pulses do not change in it. */
+export interface Interval {
+  from_s: number
+  to_s: number
+}
+
+/**
+ * The prescribed air. Density n0 and pressure p0 belong to a basis and stay fixed in time until the next one;
+ * waves displace the air; perturbations act at fixed n0 and p0.
+ */
+export interface Atmosphere {
+  /** Nothing changes inside an interval: no waves, no ramps, no profile that depends on time. */
+  steady: boolean
+  /** Instants with a jump or kink in the prescribed air, sorted, inside the run. */
+  breakPoints_s: number[]
+  /** Instants at which the density is brought back to balance with a background that changes with time. */
+  rebaseTimes_s: number[]
+  basis(time_s: number): AirBasis
+  /** The air at a time inside an interval. The record is reused by the next call. */
+  read(basis: AirBasis, time_s: number, interval: Interval): AirState
+}
+
+export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphere {
+  const { background, waves, perturbations } = scenario
+  const sources = sampleSources(scenario, grid)
+  const weights = perturbations.map((change) =>
+    grid.halfPoints_m.map((z) => altitudeWeight(change.altitude, z)),
+  )
+  const state = makeAirState(grid.halfPoints_m.length)
+  return {
+    steady:
+      waves.length === 0 &&
+      Object.values(sources).every((series) => series === null || series.steady) &&
+      perturbations.every((change) => change.time.shape !== 'ramp'),
+    breakPoints_s: breakPoints(scenario),
+    rebaseTimes_s: rebaseTimes(scenario),
+    basis(time_s) {
+      const rest = restingAir(
+        profileCurve(background.temperature_K, time_s),
+        {
+          altitude_m: background.referenceAltitude_m,
+          pressure_Pa: background.referencePressure_Pa,
+        },
+        grid,
+      )
+      return { time_s, rest, waves: waveField(waves, rest, grid) }
+    },
+    read(basis, time_s, interval) {
+      const changes = activeChanges(perturbations, weights, time_s, interval)
+      readParcels(state, basis, sources, time_s, grid)
+      apply(changes, 'temperature', state.temperature_K)
+      sources.wind.read(time_s, state.wind_m_per_s)
+      apply(changes, 'wind', state.wind_m_per_s)
+      sources.mixing.read(time_s, state.mixing_m2_per_s)
+      apply(changes, 'mixing', state.mixing_m2_per_s)
+      readComposition(state, basis, sources, time_s)
+      apply(changes, 'water', state.water)
+      applyToNuclei(changes, state.nuclei, basis.rest)
+      const middle_s = (interval.from_s + interval.to_s) / 2
+      readInjectionRates(state.injection, perturbations, weights, {
+        time_s: middle_s,
+        rest: basis.rest,
+      })
+      return state
+    },
+  }
+}
+
+interface Sources {
+  temperature: ProfileSeries
+  measured: ProfileSeries | null
+  wind: ProfileSeries
+  mixing: ProfileSeries
+  water: ProfileSeries
+  nuclei: ProfileSeries
+  photolysisLifetime: ProfileSeries | null
+}
+
+function sampleSources({ background }: Scenario, grid: AltitudeGrid): Sources {
+  const z = grid.halfPoints_m
+  const { temperatureTable_K: measured, photolysisLifetime_s: lifetime } = background
+  return {
+    temperature: profileSeries(background.temperature_K, z, 'line'),
+    measured: measured && profileSeries(measured, z, 'line'),
+    wind: profileSeries(background.wind_m_per_s, z, 'constant'),
+    mixing: profileSeries(background.mixing_m2_per_s, z, 'constant'),
+    water: profileSeries(background.water, z, 'constant'),
+    nuclei: profileSeries(background.nuclei_per_m3, z, 'constant'),
+    photolysisLifetime: lifetime && profileSeries(lifetime, z, 'constant'),
+  }
+}
+
+/**
+ * Temperature and pressure of the displaced air:
+ *   T = T0(z0) + (dT0/dz) zeta s + T',  p = p0(z0 + s zeta),  n/n0 = (p/p0)(T0/T).
+ * A measured T(z, t) is a T' at fixed altitude that replaces T0.
+ */
+function readParcels(
+  state: AirState,
+  { rest, waves }: AirBasis,
+  sources: Sources,
+  time_s: number,
+  grid: AltitudeGrid,
+): void {
+  const { temperature_K, displacement_m, pressure_Pa, densityRatio, stretching } = state
+  const restTemperature = densityRatio
+  sources.temperature.read(time_s, restTemperature)
+  if (sources.measured) sources.measured.read(time_s, temperature_K)
+  else temperature_K.set(restTemperature)
+  displacement_m.fill(0)
+  waves.add(time_s, temperature_K, displacement_m)
+  for (let i = 0; i < temperature_K.length; i++) {
+    const shift = displacement_m[i]
+    pressure_Pa[i] = rest.pressure_Pa[i]
+    if (shift !== 0) {
+      temperature_K[i] += rest.lapse_K_per_m[i] * shift
+      pressure_Pa[i] = Math.exp(readHermite(rest.logPressure, grid.halfPoints_m[i] + shift))
+    }
+    densityRatio[i] =
+      (pressure_Pa[i] / rest.pressure_Pa[i]) * (restTemperature[i] / temperature_K[i])
+  }
+  readStretching(stretching, displacement_m, grid.spacing_m)
+}
+
+/** Central differences over one cell, one-sided at the ends; never below -LARGEST_STRETCHING. */
+function readStretching(stretching: Float64Array, displacement_m: Float64Array, dz: number): void {
+  const last = stretching.length - 1
+  for (let i = 0; i <= last; i++) {
+    const [below, above] = [Math.max(i - 1, 0), Math.min(i + 1, last)]
+    const change = (displacement_m[above] - displacement_m[below]) / ((above - below) * (dz / 2))
+    stretching[i] = Math.max(change, -LARGEST_STRETCHING)
+  }
+}
+
+function readComposition(
+  state: AirState,
+  { rest }: AirBasis,
+  sources: Sources,
+  time_s: number,
+): void {
+  sources.water.read(time_s, state.water)
+  sources.nuclei.read(time_s, state.nuclei)
+  for (let i = 0; i < state.nuclei.length; i++) state.nuclei[i] /= rest.density_per_m3[i]
+  if (sources.photolysisLifetime === null) return
+  sources.photolysisLifetime.read(time_s, state.photolysis_per_s)
+  for (let i = 0; i < state.photolysis_per_s.length; i++) {
+    state.photolysis_per_s[i] = 1 / state.photolysis_per_s[i]
+  }
+}
+
+interface ActiveChange {
+  change: Perturbation
+  strength: number
+  weights: Float64Array
+}
+
+/** Steps and pulses are judged at the middle of the interval, so that its edges belong to one side. */
+function activeChanges(
+  perturbations: readonly Perturbation[],
+  weights: readonly Float64Array[],
+  time_s: number,
+  { from_s, to_s }: Interval,
+): ActiveChange[] {
+  return perturbations
+    .map((change, i) => ({
+      change,
+      strength: timeStrength(change.time, change.time.shape === 'ramp' ? time_s : (from_s + to_s) / 2),
+      weights: weights[i],
+    }))
+    .filter(({ strength }) => strength > 0)
+}
+
+function apply(
+  changes: readonly ActiveChange[],
+  quantity: PerturbedQuantity,
+  values: Float64Array,
+): void {
+  for (const { change, strength, weights } of changes) {
+    if (change.quantity !== quantity) continue
+    for (let i = 0; i < values.length; i++) {
+      values[i] = perturbed(change, values[i], strength * weights[i])
+    }
+  }
+}
+
+/** Nuclei are changed by a number density, the background is a mixing ratio. */
+function applyToNuclei(
+  changes: readonly ActiveChange[],
+  nuclei: Float64Array,
+  rest: RestingAir,
+): void {
+  for (const { change, strength, weights } of changes) {
+    if (change.quantity !== 'nuclei') continue
+    for (let i = 0; i < nuclei.length; i++) {
+      const density = rest.density_per_m3[i]
+      nuclei[i] = perturbed(change, nuclei[i] * density, strength * weights[i]) / density
+    }
+  }
+}
+
+function breakPoints(scenario: Scenario): number[] {
+  const { background, waves, perturbations, duration_s } = scenario
+  const profiles = [
+    background.temperature_K,
+    background.water,
+    background.wind_m_per_s,
+    background.mixing_m2_per_s,
+    background.nuclei_per_m3,
+    background.photolysisLifetime_s,
+    background.temperatureTable_K,
+  ]
+  const times = [
+    ...profiles.flatMap((profile) => (profile && profile.times_s.length > 1 ? profile.times_s : [])),
+    ...waves.flatMap(({ start_s, end_s, rise_s }) => [start_s, start_s + rise_s, end_s - rise_s, end_s]),
+    ...perturbations.flatMap(({ time }) => timeEdges(time)),
+    ...rebaseTimes(scenario),
+  ]
+  return [...new Set(times.filter((time) => time > 0 && time < duration_s))].sort((a, b) => a - b)
+}
+
+function rebaseTimes({ background, duration_s }: Scenario): number[] {
+  if (background.temperature_K.times_s.length < 2) return []
+  const count = Math.ceil(duration_s / background.rebaseInterval_s) - 1
+  return Array.from({ length: count }, (_, i) => (i + 1) * background.rebaseInterval_s)
+}
