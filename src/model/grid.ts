@@ -1,8 +1,9 @@
 /**
  * The two axes of the column: altitude cells and radius classes.
  */
-import type { GridSpec, SizeSpec } from './scenario/types.ts'
+
 import { WATER_MOLECULE_MASS } from './constants.ts'
+import type { GridSpec, SizeSpec } from './scenario/types.ts'
 
 /** Uniform cells in resting altitude. */
 export interface AltitudeGrid {

@@ -181,7 +181,10 @@ function activeChanges(
   return perturbations
     .map((change, i) => ({
       change,
-      strength: timeStrength(change.time, change.time.shape === 'ramp' ? time_s : (from_s + to_s) / 2),
+      strength: timeStrength(
+        change.time,
+        change.time.shape === 'ramp' ? time_s : (from_s + to_s) / 2,
+      ),
       weights: weights[i],
     }))
     .filter(({ strength }) => strength > 0)
@@ -227,8 +230,15 @@ function breakPoints(scenario: Scenario): number[] {
     background.temperatureTable_K,
   ]
   const times = [
-    ...profiles.flatMap((profile) => (profile && profile.times_s.length > 1 ? profile.times_s : [])),
-    ...waves.flatMap(({ start_s, end_s, rise_s }) => [start_s, start_s + rise_s, end_s - rise_s, end_s]),
+    ...profiles.flatMap((profile) =>
+      profile && profile.times_s.length > 1 ? profile.times_s : [],
+    ),
+    ...waves.flatMap(({ start_s, end_s, rise_s }) => [
+      start_s,
+      start_s + rise_s,
+      end_s - rise_s,
+      end_s,
+    ]),
     ...perturbations.flatMap(({ time }) => timeEdges(time)),
     ...rebaseTimes(scenario),
   ]

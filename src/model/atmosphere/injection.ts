@@ -18,7 +18,8 @@ export function readInjectionRates(
   perturbations.forEach((change, index) => {
     const { quantity, time } = change
     if (quantity !== 'water' && quantity !== 'nuclei') return
-    if (time.shape !== 'ramp' || time_s < time.start_s || time_s >= time.start_s + time.rise_s) return
+    if (time.shape !== 'ramp' || time_s < time.start_s || time_s >= time.start_s + time.rise_s)
+      return
     rates.active = true
     const added = quantity === 'water' ? rates.waterAdded_per_s : rates.nucleiAdded_per_s
     const gain = quantity === 'water' ? rates.waterGain_per_s : rates.nucleiGain_per_s

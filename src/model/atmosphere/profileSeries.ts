@@ -18,7 +18,10 @@ function timePlace(times_s: readonly number[], time_s: number): TimePlace {
 
 function curvesOf(profile: Profile): Curve[] {
   return profile.values.map((values) => {
-    const curve = monotoneCubic(profile.altitudes_m, profile.logarithmic ? values.map(Math.log) : values)
+    const curve = monotoneCubic(
+      profile.altitudes_m,
+      profile.logarithmic ? values.map(Math.log) : values,
+    )
     if (!profile.logarithmic) return curve
     return {
       value: (z) => Math.exp(curve.value(z)),

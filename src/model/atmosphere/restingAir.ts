@@ -62,14 +62,14 @@ function hydrostaticTable(
   reference: { altitude_m: number; pressure_Pa: number },
   grid: AltitudeGrid,
 ): HermiteTable {
-  const slope = (z: number) => (-AIR_MOLECULE_MASS * gravity(z)) / (BOLTZMANN * temperature.value(z))
+  const slope = (z: number) =>
+    (-AIR_MOLECULE_MASS * gravity(z)) / (BOLTZMANN * temperature.value(z))
   const spacing = grid.spacing_m / 2
   const marginNodes = Math.ceil(MARGIN / spacing)
   const start = grid.halfPoints_m[0] - marginNodes * spacing
   const count = grid.halfPoints_m.length + 2 * marginNodes
   const values = new Float64Array(count)
-  values[0] =
-    Math.log(reference.pressure_Pa) + integrateFinely(slope, reference.altitude_m, start)
+  values[0] = Math.log(reference.pressure_Pa) + integrateFinely(slope, reference.altitude_m, start)
   for (let i = 1; i < count; i++) {
     const from = start + (i - 1) * spacing
     values[i] = values[i - 1] + integrate(slope, from, from + spacing)

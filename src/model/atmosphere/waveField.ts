@@ -101,8 +101,7 @@ function amplitudeProfile(wave: Wave, air: RestingAir, grid: AltitudeGrid): Floa
     z.length - 1 - 1e-9,
   )
   const below = Math.floor(place)
-  const atReference =
-    exponent[below] + (place - below) * (exponent[below + 1] - exponent[below])
+  const atReference = exponent[below] + (place - below) * (exponent[below + 1] - exponent[below])
   return exponent.map((value) => wave.amplitude_K * Math.exp(value - atReference))
 }
 

@@ -11,3 +11,23 @@ export interface Variable {
   standardName: string | null
   type: 'number' | 'text'
 }
+
+/** A variable together with how it is worked out. */
+export interface Computed<Source, Result> extends Variable {
+  compute(source: Source): Result
+}
+
+/** A numerical variable; most have no CF standard name. */
+export function variable(
+  name: string,
+  longName: string,
+  unit: string,
+  standardName: string | null = null,
+): Variable {
+  return { name, longName, unit, standardName, type: 'number' }
+}
+
+/** The description alone, as it goes to a file. */
+export function describe({ name, longName, unit, standardName, type }: Variable): Variable {
+  return { name, longName, unit, standardName, type }
+}

@@ -39,7 +39,9 @@ export function monotoneCubic(x: readonly number[], y: readonly number[]): Curve
       const s = (at - x[i]) / h
       const secant = (y[i + 1] - y[i]) / h
       return (
-        6 * s * (1 - s) * secant + (1 - s) * (1 - 3 * s) * slopes[i] + s * (3 * s - 2) * slopes[i + 1]
+        6 * s * (1 - s) * secant +
+        (1 - s) * (1 - 3 * s) * slopes[i] +
+        s * (3 * s - 2) * slopes[i + 1]
       )
     },
   }

@@ -22,3 +22,13 @@ export function prepareColumn(scenario: Scenario): Column {
     atmosphere: makeAtmosphere(scenario, grid),
   }
 }
+
+/** What a saved state must agree on with the column that goes on from it. */
+export function stateLayoutDescription({ layout, scenario, sizes }: Column) {
+  return {
+    ...layout,
+    grid: scenario.grid,
+    radii_m: Array.from(sizes.radii_m),
+    nuclei_m: scenario.background.nucleusClasses.map(({ radius_m }) => radius_m),
+  }
+}

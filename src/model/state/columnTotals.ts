@@ -9,7 +9,10 @@ export interface ColumnTotals {
   nuclei: number[]
 }
 
-export function columnTotals(y: ArrayLike<number>, { grid, sizes, layout }: ColumnAxes): ColumnTotals {
+export function columnTotals(
+  y: ArrayLike<number>,
+  { grid, sizes, layout }: ColumnAxes,
+): ColumnTotals {
   const { levels, classes, nucleusClasses } = layout
   const totals: ColumnTotals = { vapour: 0, ice: 0, nuclei: new Array(nucleusClasses).fill(0) }
   for (let level = 0; level < levels; level++) {

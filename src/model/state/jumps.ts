@@ -57,7 +57,8 @@ export function rebase(
     y[layout.waterAccount.rebasing] += water
     for (let j = 0; j < layout.nucleusClasses; j++) {
       const place = level * layout.nucleusClasses + j
-      y[layout.nucleusAccount.rebasing + j] += scale(layout.nuclei + place) + scale(layout.cores + place)
+      y[layout.nucleusAccount.rebasing + j] +=
+        scale(layout.nuclei + place) + scale(layout.cores + place)
     }
   }
 }

@@ -163,7 +163,8 @@ function readLevels(into: AirCoefficients, column: Column, basis: AirBasis, air:
     const particle = T + ice.particleWarming_K
     const n0 = basis.rest.density_per_m3[point]
     const saturated = saturationPressure(ice.saturation, T)
-    const overParticle = ice.particleWarming_K === 0 ? saturated : saturationPressure(ice.saturation, particle)
+    const overParticle =
+      ice.particleWarming_K === 0 ? saturated : saturationPressure(ice.saturation, particle)
     level.density[i] = n0
     level.inverseDensity[i] = 1 / n0
     level.temperature[i] = T

@@ -5,7 +5,11 @@
 import type { AirBasis, Interval } from '../atmosphere/atmosphere.ts'
 import type { Column } from '../state/column.ts'
 import type { StateLayout } from '../state/layout.ts'
-import { type AirCoefficients, makeAirCoefficients, readAirCoefficients } from './airCoefficients.ts'
+import {
+  type AirCoefficients,
+  makeAirCoefficients,
+  readAirCoefficients,
+} from './airCoefficients.ts'
 import { transportCores } from './kernel/coreTransport.ts'
 import { exchangeIce, handOver } from './kernel/iceExchange.ts'
 import { transportIce } from './kernel/iceTransport.ts'
@@ -109,7 +113,12 @@ function makeGasTransport({ layout, grid, scenario }: Column, coefficients: AirC
 
 type Floor = 'bottom' | 'fallout'
 
-function bookWater(dy: number[], { waterAccount }: StateLayout, inflow: Inflow, floor: Floor): void {
+function bookWater(
+  dy: number[],
+  { waterAccount }: StateLayout,
+  inflow: Inflow,
+  floor: Floor,
+): void {
   dy[waterAccount[floor]] += inflow.bottom
   dy[waterAccount.top] += inflow.top
   dy[waterAccount.lateral] += inflow.lateral

@@ -29,7 +29,8 @@ export function makeKelvinTable(edges_m: Float64Array): KelvinTable {
       const index = Math.min(Math.round(kelvinRadius_m / spacing), rows - 1)
       const start = index * width
       if (filled[index] === 0) {
-        for (let k = 0; k < width; k++) factors[start + k] = Math.exp((index * spacing) / edges_m[k])
+        for (let k = 0; k < width; k++)
+          factors[start + k] = Math.exp((index * spacing) / edges_m[k])
         filled[index] = 1
       }
       return start

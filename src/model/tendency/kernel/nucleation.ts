@@ -39,7 +39,12 @@ export function makeNucleationKernel(column: Column): NucleationKernel {
   }
 }
 
-function activate(rates: Float64Array, radii: readonly number[], germ: number, ceiling: number): void {
+function activate(
+  rates: Float64Array,
+  radii: readonly number[],
+  germ: number,
+  ceiling: number,
+): void {
   for (let j = 0; j < radii.length; j++) rates[j] = germ < radii[j] ? ceiling : 0
 }
 
@@ -88,6 +93,8 @@ function enter(
     dy[layout.cores + place] += born
     dy[cell] += born - upper
     dy[cell + 1] += upper
-    dy[layout.vapour + i] -= (born - upper) * sizes.molecules[entry.lowerClass] + upper * sizes.molecules[entry.lowerClass + 1]
+    dy[layout.vapour + i] -=
+      (born - upper) * sizes.molecules[entry.lowerClass] +
+      upper * sizes.molecules[entry.lowerClass + 1]
   }
 }

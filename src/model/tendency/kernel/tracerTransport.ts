@@ -45,8 +45,7 @@ export function transportTracer(
   for (let f = 0; f <= levels; f++) {
     const halfSlopeAbove = f < levels ? halfVanLeerSlope(q[f + 1] - q[f], q[f + 2] - q[f + 1]) : 0
     const wind = face.wind[f]
-    const carried =
-      wind > 0 ? wind * (q[f] + halfSlopeBelow) : wind * (q[f + 1] - halfSlopeAbove)
+    const carried = wind > 0 ? wind * (q[f] + halfSlopeBelow) : wind * (q[f + 1] - halfSlopeAbove)
     const flux = carried - exchange[f] * (q[f + 1] - q[f])
     if (f > 0) {
       const converged = q[f] * level.lateral[f - 1]

@@ -1,10 +1,5 @@
 import type { Column } from '../../state/column.ts'
-
-/**
- * Ice below this number density, one particle in a hundred cubic kilometres, counts as none: no flux leaves such a
- * cell, on either side of the account. It lies below every tolerance of the solver. 1/m3.
- */
-export const NO_ICE = 1e-8
+import { NO_ICE } from '../noIce.ts'
 
 /** Scratch of the fast right-hand side, made once. Rows of levels hold their classes side by side. */
 export interface IceWorkspace {
@@ -54,12 +49,12 @@ export function makeIceWorkspace({ grid, sizes, layout, scenario }: Column): Ice
     carried: new Float64Array(levels + 1),
     radii: sizes.radii_m,
     molecules: sizes.molecules,
-    moleculeSteps: sizes.molecules.map((content, k) => content - (k > 0 ? sizes.molecules[k - 1] : 0)),
+    moleculeSteps: sizes.molecules.map(
+      (content, k) => content - (k > 0 ? sizes.molecules[k - 1] : 0),
+    ),
     inverseEdgeSpacing: sizes.edgeSpacing_m.map((width) => 1 / width),
     inverseEdges: sizes.edges_m.map((radius) => 1 / radius),
-    backgroundMix: Float64Array.from(
-      scenario.background.nucleusClasses.map(({ share }) => share),
-    ),
+    backgroundMix: Float64Array.from(scenario.background.nucleusClasses.map(({ share }) => share)),
   }
 }
 
