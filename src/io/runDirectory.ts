@@ -112,9 +112,20 @@ function publishAs(partialPath: string, target: string, force: boolean): string 
   return target
 }
 
+/** Step by step, because the recursive mkdir of Node never returns where the system makes no directories. */
+function makeWithParents(path: string): void {
+  if (existsSync(path)) return
+  makeWithParents(dirname(path))
+  try {
+    mkdirSync(path)
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code !== 'EEXIST') throw error
+  }
+}
+
 function makeDirectory(path: string): void {
   try {
-    mkdirSync(path, { recursive: true })
+    makeWithParents(path)
   } catch (error) {
     throw new InputError(`the directory ${path} cannot be made: ${(error as Error).message}`)
   }
