@@ -17,7 +17,10 @@ const CLIMATOLOGY =
 
 export const runDefaults = {
   title: because('untitled', 'a run needs no name'),
-  duration_h: because(24, 'a day brings a cloud from nothing to maturity'),
+  duration_h: because(
+    24,
+    'a day brings a cloud from nothing to the heights, sizes and numbers that lidars see; in its last 6 h column ice still rises by an eighth, the ultraviolet albedo by a quarter',
+  ),
   output_every_min: because(
     10,
     'the usual integration time of a lidar; common practice, no source',
@@ -51,19 +54,19 @@ export const pressureDefaults = {
 export const temperatureDefaults = {
   knots: because(
     [
-      { altitude_km: 70, temperature_K: 221 },
-      { altitude_km: 72, temperature_K: 209 },
-      { altitude_km: 77, temperature_K: 180 },
-      { altitude_km: 80, temperature_K: 163.5 },
-      { altitude_km: 82.5, temperature_K: 150 },
-      { altitude_km: 85, temperature_K: 138.5 },
+      { altitude_km: 70, temperature_K: 219 },
+      { altitude_km: 77, temperature_K: 177 },
+      { altitude_km: 80, temperature_K: 159 },
+      { altitude_km: 81, temperature_K: 153.8 },
+      { altitude_km: 82.5, temperature_K: 148.2 },
+      { altitude_km: 85, temperature_K: 138 },
       { altitude_km: 88, temperature_K: 129 },
       { altitude_km: 91, temperature_K: 133 },
       { altitude_km: 94, temperature_K: 146 },
       { altitude_km: 97, temperature_K: 163 },
       { altitude_km: 100, temperature_K: 185 },
     ],
-    'published rocket mean of 129 K at 88 km (doi 10.1029/91JD02018, abstract read) and its lapse rate near -6 K/km lower down; about 150 K near 82.5 km is commonly quoted, from memory; the other numbers are invented',
+    'published rocket mean of 129 K at 88 km (doi 10.1029/91JD02018, abstract read); lapse rate steepening to the published -6 K/km below 80 km (doi 10.1029/JD094iD12p14647, abstract read); 150 K at 82 km, where about 150 K near 82.5 km is commonly quoted, from memory; in between invented, the gentle lapse at 81 to 82.5 km so that ice has gone where the air is far from saturation',
   ),
   offset_K: because(0, 'the profile is taken as it stands'),
   rebase_every_h: because(24, 'a season changes little in a day, and the step is booked'),
@@ -73,16 +76,16 @@ export const waterDefaults = {
   knots: because(
     [
       { altitude_km: 70, water_ppmv: 6 },
-      { altitude_km: 77, water_ppmv: 5 },
-      { altitude_km: 80, water_ppmv: 4.5 },
-      { altitude_km: 83, water_ppmv: 3.5 },
-      { altitude_km: 85, water_ppmv: 2.7 },
+      { altitude_km: 77, water_ppmv: 5.5 },
+      { altitude_km: 80, water_ppmv: 5 },
+      { altitude_km: 83, water_ppmv: 3.6 },
+      { altitude_km: 85, water_ppmv: 3.1 },
       { altitude_km: 88, water_ppmv: 1.8 },
       { altitude_km: 92, water_ppmv: 1 },
       { altitude_km: 96, water_ppmv: 0.6 },
       { altitude_km: 100, water_ppmv: 0.4 },
     ],
-    `rounded values near ${CLIMATOLOGY}`,
+    `invented on the pattern of ${CLIMATOLOGY}: within 8 % of it up to 83 km and from 96 km on, a fifth more at 85 to 92 km, since a climatology includes air that ice has already dried`,
   ),
   factor: because(1, 'the profile is taken as it stands'),
 }
@@ -91,14 +94,14 @@ export const windDefaults = {
   knots: because(
     [
       { altitude_km: 70, wind_cm_per_s: 1 },
-      { altitude_km: 77, wind_cm_per_s: 2 },
-      { altitude_km: 83, wind_cm_per_s: 2.5 },
-      { altitude_km: 87, wind_cm_per_s: 3 },
-      { altitude_km: 90, wind_cm_per_s: 2.5 },
+      { altitude_km: 77, wind_cm_per_s: 4 },
+      { altitude_km: 83, wind_cm_per_s: 5 },
+      { altitude_km: 87, wind_cm_per_s: 4 },
+      { altitude_km: 90, wind_cm_per_s: 3 },
       { altitude_km: 94, wind_cm_per_s: 1.5 },
       { altitude_km: 100, wind_cm_per_s: 0.5 },
     ],
-    'invented, inside the 1 to 5 cm/s upwelling of common practice (no source)',
+    'invented, inside the 1 to 5 cm/s upwelling of common practice (no source); at its upper end at 83 km, so that ice is held up long enough to reach 50 nm within a day',
   ),
   factor: because(1, 'the profile is taken as it stands'),
 }
@@ -106,15 +109,15 @@ export const windDefaults = {
 export const mixingDefaults = {
   knots: because(
     [
-      { altitude_km: 70, mixing_m2_per_s: 5 },
-      { altitude_km: 77, mixing_m2_per_s: 10 },
-      { altitude_km: 83, mixing_m2_per_s: 25 },
-      { altitude_km: 88, mixing_m2_per_s: 60 },
-      { altitude_km: 91, mixing_m2_per_s: 100 },
-      { altitude_km: 96, mixing_m2_per_s: 80 },
-      { altitude_km: 100, mixing_m2_per_s: 60 },
+      { altitude_km: 70, mixing_m2_per_s: 10 },
+      { altitude_km: 81.5, mixing_m2_per_s: 10 },
+      { altitude_km: 83, mixing_m2_per_s: 20 },
+      { altitude_km: 88, mixing_m2_per_s: 40 },
+      { altitude_km: 91, mixing_m2_per_s: 30 },
+      { altitude_km: 96, mixing_m2_per_s: 25 },
+      { altitude_km: 100, mixing_m2_per_s: 25 },
     ],
-    'invented, inside the 10 to 100 m2/s of common practice (no source)',
+    'invented, inside the 10 to 100 m2/s of common practice (no source); least below the layer, so that mixing spreads little ice into the dry air there; strong mixing above 90 km would only shorten the steps of the integration',
   ),
   factor: because(1, 'the profile is taken as it stands'),
 }
@@ -122,25 +125,25 @@ export const mixingDefaults = {
 export const nucleusDefaults = {
   knots: because(
     [
-      { altitude_km: 70, nuclei_per_cm3: 300 },
-      { altitude_km: 77, nuclei_per_cm3: 800 },
-      { altitude_km: 80, nuclei_per_cm3: 1500 },
-      { altitude_km: 83, nuclei_per_cm3: 2500 },
-      { altitude_km: 86, nuclei_per_cm3: 3500 },
-      { altitude_km: 89, nuclei_per_cm3: 4000 },
-      { altitude_km: 93, nuclei_per_cm3: 3000 },
-      { altitude_km: 97, nuclei_per_cm3: 1500 },
-      { altitude_km: 100, nuclei_per_cm3: 500 },
+      { altitude_km: 70, nuclei_per_cm3: 400 },
+      { altitude_km: 77, nuclei_per_cm3: 1100 },
+      { altitude_km: 80, nuclei_per_cm3: 2000 },
+      { altitude_km: 83, nuclei_per_cm3: 3500 },
+      { altitude_km: 86, nuclei_per_cm3: 5000 },
+      { altitude_km: 89, nuclei_per_cm3: 5500 },
+      { altitude_km: 93, nuclei_per_cm3: 4000 },
+      { altitude_km: 97, nuclei_per_cm3: 2000 },
+      { altitude_km: 100, nuclei_per_cm3: 700 },
     ],
     'invented; some thousands of smoke particles per cm3 are common practice, no source',
   ),
   classes: because(
     [
-      { radius_nm: 1, share: 0.7 },
-      { radius_nm: 1.6, share: 0.25 },
-      { radius_nm: 2.5, share: 0.05 },
+      { radius_nm: 1, share: 0.5 },
+      { radius_nm: 2, share: 0.3 },
+      { radius_nm: 3, share: 0.2 },
     ],
-    'invented; few large and many small smoke particles',
+    'invented; more small smoke particles than large ones, with enough large ones that the mature cloud holds about 100 to 30 ice particles per cm3 from top to bottom',
   ),
   factor: because(1, 'the profile is taken as it stands'),
 }
