@@ -1,5 +1,7 @@
 import type { AirBasis, Interval } from './atmosphere/atmosphere.ts'
+import { isNeutral } from './atmosphere/perturbation.ts'
 import { makeIntegrator, type SolverStatistics } from './integrate/integrate.ts'
+import type { Perturbation } from './scenario/types.ts'
 import type { Column } from './state/column.ts'
 import { initialState } from './state/initialState.ts'
 import { inject, rebase } from './state/jumps.ts'
@@ -19,7 +21,7 @@ export interface Snapshot {
 }
 
 export type SimulationEvent =
-  | { kind: 'step'; time_s: number }
+  | { kind: 'step'; time_s: number; y: readonly number[] }
   | { kind: 'state'; snapshot: Snapshot }
 
 /** First step tried when nothing is known, s. */
@@ -30,7 +32,7 @@ const FIRST_STEP = 1
  *   1. re-base the air where a changing background asks for it, and inject what steps and pulses bring,
  *   2. integrate the sum of all tendencies over the interval,
  *   3. hand out the state if the interval ends at an output time.
- * Yields a 'step' after every accepted solver step (a place to stop or breathe) and a 'state' per output time.
+ * Yields a 'step' after every accepted solver step (a place to look, stop or breathe) and a 'state' per output time.
  *
  * @param from continue from here instead of from the initial state
  * @throws ModelError when the solution fails
@@ -49,7 +51,7 @@ export function* simulate(
     tendency.enter(basis, interval)
     const steps = integrator.over(interval, snapshot)
     let step = steps.next()
-    for (; !step.done; step = steps.next()) yield { kind: 'step', time_s: step.value }
+    for (; !step.done; step = steps.next()) yield { kind: 'step', ...step.value }
     snapshot = { ...step.value, time_s: interval.to_s, basisTime_s: basis.time_s }
     if (interval.output) yield { kind: 'state', snapshot }
   }
@@ -97,13 +99,7 @@ function beginInterval(
   { from_s }: Interval,
 ): { snapshot: Snapshot; basis: AirBasis } {
   const { atmosphere, scenario } = column
-  const arriving = scenario.perturbations.filter(
-    ({ quantity, time }) =>
-      (quantity === 'water' || quantity === 'nuclei') &&
-      (time.shape === 'step' || time.shape === 'pulse') &&
-      time.start_s === from_s &&
-      from_s > 0,
-  )
+  const arriving = scenario.perturbations.filter((change) => arrivesAt(change, from_s))
   const rebasing = atmosphere.rebaseTimes_s.includes(from_s)
   if (arriving.length === 0 && !rebasing) return { snapshot, basis }
   const y = snapshot.y.slice()
@@ -113,4 +109,16 @@ function beginInterval(
     inject(y, change, scenario.background.nucleusClasses, { ...column, rest: next.rest })
   }
   return { snapshot: { ...snapshot, y }, basis: next }
+}
+
+/** Whether a perturbation changes vapour or nuclei of the state at this instant; what holds from the start is in it. */
+function arrivesAt(change: Perturbation, time_s: number): boolean {
+  const { quantity, time } = change
+  return (
+    (quantity === 'water' || quantity === 'nuclei') &&
+    (time.shape === 'step' || time.shape === 'pulse') &&
+    time.start_s === time_s &&
+    time_s > 0 &&
+    !isNeutral(change)
+  )
 }

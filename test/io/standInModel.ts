@@ -49,7 +49,7 @@ export function standInModel({ beforeOutput, levels = LEVELS }: StandInChanges =
       yield { kind: 'state', snapshot }
       while (snapshot.time_s < scenario.duration_s) {
         const time_s = snapshot.time_s + scenario.outputInterval_s
-        yield { kind: 'step', time_s }
+        yield { kind: 'step', time_s, y: [...snapshot.y] }
         beforeOutput?.(time_s)
         snapshot = {
           ...snapshot,

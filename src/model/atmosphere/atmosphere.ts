@@ -3,7 +3,7 @@ import { readHermite } from '../numerics/hermite.ts'
 import type { Perturbation, PerturbedQuantity, Scenario } from '../scenario/types.ts'
 import { type AirState, makeAirState } from './airState.ts'
 import { readInjectionRates } from './injection.ts'
-import { altitudeWeight, perturbed, timeEdges, timeStrength } from './perturbation.ts'
+import { altitudeWeight, isNeutral, perturbed, timeEdges, timeStrength } from './perturbation.ts'
 import { type ProfileSeries, profileCurve, profileSeries } from './profileSeries.ts'
 import { type RestingAir, restingAir } from './restingAir.ts'
 import { LARGEST_STRETCHING, type WaveField, waveField } from './waveField.ts'
@@ -187,7 +187,7 @@ function activeChanges(
       ),
       weights: weights[i],
     }))
-    .filter(({ strength }) => strength > 0)
+    .filter(({ change, strength }) => strength > 0 && !isNeutral(change))
 }
 
 function apply(
@@ -241,6 +241,7 @@ function breakPoints(scenario: Scenario): number[] {
     ]),
     ...perturbations.flatMap(({ time }) => timeEdges(time)),
     ...rebaseTimes(scenario),
+    ...scenario.numerics.breakPoints_s,
   ]
   return [...new Set(times.filter((time) => time > 0 && time < duration_s))].sort((a, b) => a - b)
 }

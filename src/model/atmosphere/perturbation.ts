@@ -48,6 +48,11 @@ export function timeEdges(shape: TimeShape): number[] {
   }
 }
 
+/** Whether a perturbation changes nothing, not even by rounding. */
+export function isNeutral({ mode, amount }: Perturbation): boolean {
+  return amount === (mode === 'add' ? 0 : 1)
+}
+
 /** What a perturbation makes of a value: value + amount w, or value (1 + (factor - 1) w), with weight w. */
 export function perturbed(change: Perturbation, value: number, weight: number): number {
   return change.mode === 'add'

@@ -4,7 +4,7 @@ import { ModelError } from '../errors.ts'
 import type { Column } from '../state/column.ts'
 import { describeIndex, type StateLayout } from '../state/layout.ts'
 import type { Tendency } from '../tendency/tendency.ts'
-import { makeTolerances } from './tolerances.ts'
+import { makeAbsoluteTolerances, makeRelativeTolerances } from './tolerances.ts'
 
 /** Work done so far by the solver. */
 export interface SolverStatistics {
@@ -20,12 +20,18 @@ export interface SolverPoint {
   stepSize_s: number
 }
 
+/** The end of an accepted step and the state there. */
+export interface AcceptedStep {
+  time_s: number
+  y: readonly number[]
+}
+
 export interface Integrator {
   /**
-   * Integrates over one interval without break points; yields after every accepted step, with its end in seconds.
+   * Integrates over one interval without break points; yields after every accepted step.
    * @throws ModelError on a NaN, on exhausted steps, or on an exception inside the right-hand side
    */
-  over(interval: Interval, from: SolverPoint): Generator<number, SolverPoint>
+  over(interval: Interval, from: SolverPoint): Generator<AcceptedStep, SolverPoint>
   statistics: SolverStatistics
 }
 
@@ -35,7 +41,8 @@ export interface Integrator {
  */
 export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
   const { numerics } = column.scenario
-  const absoluteTolerance = makeTolerances(column)
+  const absoluteTolerance = makeAbsoluteTolerances(column)
+  const relativeTolerance = makeRelativeTolerances(column)
   const statistics: SolverStatistics = { evaluations: 0, acceptedSteps: 0, largestStep_s: 0 }
   const derivative = (time_s: number, y: number[], dy: number[]) => {
     statistics.evaluations++
@@ -45,7 +52,7 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
     statistics,
     *over({ from_s, to_s }, { y: start, stepSize_s }) {
       const solver = new Solver(derivative, start.length, {
-        relativeTolerance: numerics.relativeTolerance,
+        relativeTolerance,
         absoluteTolerance,
         initialStepSize: stepSize_s,
         maxSteps: numerics.maxStepsPerInterval,
@@ -63,13 +70,15 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
           largest = Math.max(largest, segment.x1 - segment.x0)
           statistics.acceptedSteps++
           refuseNonFinite(column, y, time_s)
-          yield time_s
+          yield { time_s, y }
         }
       } catch (error) {
         throw asModelError(error, time_s)
       }
       statistics.largestStep_s = Math.max(statistics.largestStep_s, largest)
-      return { y: Float64Array.from(y), stepSize_s: largest || stepSize_s }
+      // An interval shorter than the step says nothing about the step.
+      const isShort = to_s - from_s < stepSize_s
+      return { y: Float64Array.from(y), stepSize_s: isShort ? stepSize_s : largest }
     },
   }
 }

@@ -5,7 +5,7 @@ export interface Options {
   maxStepSize: number
   maxExtrapolationColumns: number
   denseOutput: boolean
-  relativeTolerance: number
+  relativeTolerance: number | number[]
   absoluteTolerance: number | number[]
   rawFunction: boolean
 }

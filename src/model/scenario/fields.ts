@@ -60,6 +60,15 @@ export function wholeNumber(meaning: string, bounds: Bounds, fallback: Default<n
     .describe(described(meaning, bounds.unit, fallback))
 }
 
+/** A list of instants, in any order. */
+export function instants(meaning: string, bounds: Bounds, fallback: Default<number[]>) {
+  return z
+    .array(bounded(z.number(), bounds))
+    .max(10_000)
+    .default(fallback.value)
+    .describe(described(meaning, bounds.unit, fallback))
+}
+
 /** Least and greatest value, as a list of two numbers. */
 export function span(meaning: string, bounds: Bounds, fallback: Default<number[]>) {
   return z

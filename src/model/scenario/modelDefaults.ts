@@ -71,6 +71,10 @@ export const numericsDefaults = {
     'no visible effect on the cloud; 240 s is not safe under waves',
   ),
   max_steps_per_interval: because(100_000, 'hundreds of times what an ordinary interval needs'),
+  break_points_h: because(
+    [] as number[],
+    'the edges of waves, perturbations and profiles are found by themselves; a comparison of two runs lists here those of both',
+  ),
   extrapolation_columns: because(3, 'the fastest order for this system, measured'),
 }
 

@@ -2,7 +2,15 @@
  * How the column is integrated, what looks at it, and what is written.
  */
 import { z } from 'zod'
-import { choice, given, optionalNumber, quantity, section, wholeNumber } from './fields.ts'
+import {
+  choice,
+  given,
+  instants,
+  optionalNumber,
+  quantity,
+  section,
+  wholeNumber,
+} from './fields.ts'
 import { channelDefaults, numericsDefaults, outputDefaults } from './modelDefaults.ts'
 
 export const numericsSection = section('Accuracy of the integration', {
@@ -35,6 +43,11 @@ export const numericsSection = section('Accuracy of the integration', {
     'Steps between two outputs after which the run gives up',
     { from: 10, to: 1e8 },
     numericsDefaults.max_steps_per_interval,
+  ),
+  break_points_h: instants(
+    'Further instants that the integration meets exactly',
+    { unit: 'h', above: 0, to: 1e6 },
+    numericsDefaults.break_points_h,
   ),
   extrapolation_columns: wholeNumber(
     'Extrapolation columns of the integrator',

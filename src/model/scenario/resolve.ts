@@ -107,6 +107,7 @@ function resolveNumerics(numerics: ScenarioDocument['numerics']): NumericsSpec {
     nucleationCeiling_s: numerics.nucleation_ceiling_s,
     maxStepsPerInterval: numerics.max_steps_per_interval,
     extrapolationColumns: numerics.extrapolation_columns,
+    breakPoints_s: numerics.break_points_h.map((time) => time * HOUR),
   }
 }
 

@@ -154,6 +154,8 @@ export interface NumericsSpec {
   nucleationCeiling_s: number
   maxStepsPerInterval: number
   extrapolationColumns: number
+  /** Instants to be met exactly beside those that the scenario itself has. */
+  breakPoints_s: number[]
 }
 
 export type ChannelGeometry =
