@@ -1,12 +1,13 @@
 import type { AltitudeGrid } from '../grid.ts'
-import { readHermite } from '../numerics/hermite.ts'
 import type { Perturbation, PerturbedQuantity, Scenario } from '../scenario/types.ts'
 import { type AirState, makeAirState } from './airState.ts'
 import { readInjectionRates } from './injection.ts'
+import { type MeasuredTemperature, measuredTemperature } from './measuredTemperature.ts'
+import { readParcels } from './parcels.ts'
 import { altitudeWeight, isNeutral, perturbed, timeEdges, timeStrength } from './perturbation.ts'
 import { type ProfileSeries, profileCurve, profileSeries } from './profileSeries.ts'
 import { type RestingAir, restingAir } from './restingAir.ts'
-import { LARGEST_STRETCHING, type WaveField, waveField } from './waveField.ts'
+import { type WaveField, waveField } from './waveField.ts'
 
 /** Air in balance at one time of the run, and the waves that it carries. */
 export interface AirBasis {
@@ -44,6 +45,14 @@ export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphe
     grid.halfPoints_m.map((z) => altitudeWeight(change.altitude, z)),
   )
   const state = makeAirState(grid.halfPoints_m.length)
+  const reference = {
+    altitude_m: background.referenceAltitude_m,
+    pressure_Pa: background.referencePressure_Pa,
+  }
+  const restAt = (time_s: number) =>
+    restingAir(profileCurve(background.temperature_K, time_s), reference, grid)
+  // Nuclei are given as a number density; the mixing ratio that it makes at the start is theirs for the whole run.
+  const startDensity_per_m3 = restAt(0).density_per_m3
   return {
     steady:
       waves.length === 0 &&
@@ -52,30 +61,23 @@ export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphe
     breakPoints_s: breakPoints(scenario),
     rebaseTimes_s: rebaseTimes(scenario),
     basis(time_s) {
-      const rest = restingAir(
-        profileCurve(background.temperature_K, time_s),
-        {
-          altitude_m: background.referenceAltitude_m,
-          pressure_Pa: background.referencePressure_Pa,
-        },
-        grid,
-      )
+      const rest = restAt(time_s)
       return { time_s, rest, waves: waveField(waves, rest, grid) }
     },
     read(basis, time_s, interval) {
       const changes = activeChanges(perturbations, weights, time_s, interval)
-      readParcels(state, basis, sources, time_s, grid)
+      const moment = { time_s, middle_s: (interval.from_s + interval.to_s) / 2 }
+      readParcels(state, basis, sources, moment, grid)
       apply(changes, 'temperature', state.temperature_K)
       sources.wind.read(time_s, state.wind_m_per_s)
       apply(changes, 'wind', state.wind_m_per_s)
       sources.mixing.read(time_s, state.mixing_m2_per_s)
       apply(changes, 'mixing', state.mixing_m2_per_s)
-      readComposition(state, basis, sources, time_s)
+      readComposition(state, sources, startDensity_per_m3, time_s)
       apply(changes, 'water', state.water)
-      applyToNuclei(changes, state.nuclei, basis.rest)
-      const middle_s = (interval.from_s + interval.to_s) / 2
+      applyToNuclei(changes, state.nuclei, startDensity_per_m3)
       readInjectionRates(state.injection, perturbations, weights, {
-        time_s: middle_s,
+        time_s: moment.middle_s,
         rest: basis.rest,
       })
       return state
@@ -85,7 +87,7 @@ export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphe
 
 interface Sources {
   temperature: ProfileSeries
-  measured: ProfileSeries | null
+  measured: MeasuredTemperature | null
   wind: ProfileSeries
   mixing: ProfileSeries
   water: ProfileSeries
@@ -98,7 +100,7 @@ function sampleSources({ background }: Scenario, grid: AltitudeGrid): Sources {
   const { temperatureTable_K: measured, photolysisLifetime_s: lifetime } = background
   return {
     temperature: profileSeries(background.temperature_K, z, 'line'),
-    measured: measured && profileSeries(measured, z, 'line'),
+    measured: measured && measuredTemperature(measured, z),
     wind: profileSeries(background.wind_m_per_s, z, 'constant'),
     mixing: profileSeries(background.mixing_m2_per_s, z, 'constant'),
     water: profileSeries(background.water, z, 'constant'),
@@ -107,57 +109,15 @@ function sampleSources({ background }: Scenario, grid: AltitudeGrid): Sources {
   }
 }
 
-/**
- * Temperature and pressure of the displaced air:
- *   T = T0(z0) + (dT0/dz) zeta s + T',  p = p0(z0 + s zeta),  n/n0 = (p/p0)(T0/T).
- * A measured T(z, t) is a T' at fixed altitude that replaces T0.
- */
-function readParcels(
-  state: AirState,
-  { rest, waves }: AirBasis,
-  sources: Sources,
-  time_s: number,
-  grid: AltitudeGrid,
-): void {
-  const { temperature_K, displacement_m, pressure_Pa, densityRatio, stretching } = state
-  const restTemperature = densityRatio
-  sources.temperature.read(time_s, restTemperature)
-  if (sources.measured) sources.measured.read(time_s, temperature_K)
-  else temperature_K.set(restTemperature)
-  displacement_m.fill(0)
-  waves.add(time_s, temperature_K, displacement_m)
-  for (let i = 0; i < temperature_K.length; i++) {
-    const shift = displacement_m[i]
-    pressure_Pa[i] = rest.pressure_Pa[i]
-    if (shift !== 0) {
-      temperature_K[i] += rest.lapse_K_per_m[i] * shift
-      pressure_Pa[i] = Math.exp(readHermite(rest.logPressure, grid.halfPoints_m[i] + shift))
-    }
-    densityRatio[i] =
-      (pressure_Pa[i] / rest.pressure_Pa[i]) * (restTemperature[i] / temperature_K[i])
-  }
-  readStretching(stretching, displacement_m, grid.spacing_m)
-}
-
-/** Central differences over one cell, one-sided at the ends; never below -LARGEST_STRETCHING. */
-function readStretching(stretching: Float64Array, displacement_m: Float64Array, dz: number): void {
-  const last = stretching.length - 1
-  for (let i = 0; i <= last; i++) {
-    const [below, above] = [Math.max(i - 1, 0), Math.min(i + 1, last)]
-    const change = (displacement_m[above] - displacement_m[below]) / ((above - below) * (dz / 2))
-    stretching[i] = Math.max(change, -LARGEST_STRETCHING)
-  }
-}
-
 function readComposition(
   state: AirState,
-  { rest }: AirBasis,
   sources: Sources,
+  startDensity_per_m3: Float64Array,
   time_s: number,
 ): void {
   sources.water.read(time_s, state.water)
   sources.nuclei.read(time_s, state.nuclei)
-  for (let i = 0; i < state.nuclei.length; i++) state.nuclei[i] /= rest.density_per_m3[i]
+  for (let i = 0; i < state.nuclei.length; i++) state.nuclei[i] /= startDensity_per_m3[i]
   if (sources.photolysisLifetime === null) return
   sources.photolysisLifetime.read(time_s, state.photolysis_per_s)
   for (let i = 0; i < state.photolysis_per_s.length; i++) {
@@ -207,12 +167,12 @@ function apply(
 function applyToNuclei(
   changes: readonly ActiveChange[],
   nuclei: Float64Array,
-  rest: RestingAir,
+  density_per_m3: Float64Array,
 ): void {
   for (const { change, strength, weights } of changes) {
     if (change.quantity !== 'nuclei') continue
     for (let i = 0; i < nuclei.length; i++) {
-      const density = rest.density_per_m3[i]
+      const density = density_per_m3[i]
       nuclei[i] = perturbed(change, nuclei[i] * density, strength * weights[i]) / density
     }
   }

@@ -1,5 +1,5 @@
-import { AIR_MOLECULE_MASS, BOLTZMANN } from '../constants.ts'
 import type { AltitudeGrid } from '../grid.ts'
+import { readHermite } from '../numerics/hermite.ts'
 import type { Wave } from '../scenario/types.ts'
 import type { RestingAir } from './restingAir.ts'
 
@@ -9,15 +9,22 @@ import type { RestingAir } from './restingAir.ts'
  *   zeta(z,t) = -s T'/(dT0/dz + g/cp)      displacement, s the share of T' that is adiabatic displacement.
  * Linear, hydrostatic gravity-wave theory (textbook relations, from memory).
  *
- * The amplitudes are held: with a = A |m|/(dT0/dz + g/cp), the sum over waves stays below the convective limit a = 1
- * and the displaced part below LARGEST_STRETCHING, so that layers of air never fold. The sum of many waves of random
- * phase is taken as three standard deviations, never more than the plain sum.
+ * The amplitudes are held: with b = A/(dT0/dz + g/cp), the sum over waves of |m| b stays below the convective limit 1
+ * and the sum of s sqrt((m b)^2 + (db/dz)^2), the largest |d zeta/dz|, below LARGEST_STRETCHING, so that layers of air
+ * never fold. The members of a random field, whose phases differ, count together as three standard deviations, never
+ * more than their plain sum.
  */
 export interface WaveField {
-  /** Adds the waves at a time to T' (K) and displacement (m) on the half points. */
-  add(time_s: number, temperature_K: Float64Array, displacement_m: Float64Array): void
+  /** Adds the waves at a time inside an interval to T' (K) and displacement (m) on the half points. */
+  add(moment: WaveMoment, temperature_K: Float64Array, displacement_m: Float64Array): void
   /** Share of the requested amplitude that is left after holding, on the half points. */
   heldShare: Float64Array
+}
+
+/** A wave without a smooth edge is on or off for a whole interval, judged at its middle. */
+export interface WaveMoment {
+  time_s: number
+  middle_s: number
 }
 
 /** Largest |d zeta/dz|: 1 + Z stays above 0.3. */
@@ -25,6 +32,9 @@ export const LARGEST_STRETCHING = 0.7
 
 /** Stability below which air counts as neutral and carries no wave, K/m. */
 const NEUTRAL_STABILITY = 1e-6
+
+/** Rounds of holding: a held amplitude has a gradient of its own. */
+const HOLDING_ROUNDS = 5
 
 interface PreparedWave {
   wave: Wave
@@ -35,8 +45,8 @@ interface PreparedWave {
 
 export function waveField(waves: readonly Wave[], air: RestingAir, grid: AltitudeGrid): WaveField {
   const stability = air.stability_K_per_m.map((value) => Math.max(value, NEUTRAL_STABILITY))
-  const amplitudes = waves.map((wave) => amplitudeProfile(wave, air, grid))
-  const heldShare = heldShareOf(waves, amplitudes, stability)
+  const amplitudes = waves.map((wave) => amplitudeProfile(wave, air))
+  const heldShare = heldShareOf(waves, amplitudes, stability, grid.spacing_m / 2)
   const prepared = waves.map((wave, w): PreparedWave => {
     const held = amplitudes[w].map((amplitude, i) => amplitude * heldShare[i])
     const phase = grid.halfPoints_m.map(
@@ -52,18 +62,19 @@ export function waveField(waves: readonly Wave[], air: RestingAir, grid: Altitud
   })
   return {
     heldShare,
-    add(time_s, temperature_K, displacement_m) {
-      for (const wave of prepared) addWave(wave, time_s, temperature_K, displacement_m)
+    add(moment, temperature_K, displacement_m) {
+      for (const wave of prepared) addWave(wave, moment, temperature_K, displacement_m)
     },
   }
 }
 
 function addWave(
   { wave, cosine, sine, displacementFactor }: PreparedWave,
-  time_s: number,
+  { time_s, middle_s }: WaveMoment,
   temperature_K: Float64Array,
   displacement_m: Float64Array,
 ): void {
+  if (middle_s < wave.start_s || middle_s > wave.end_s) return
   const strength = waveEnvelope(wave, time_s)
   if (strength === 0) return
   const angle = (2 * Math.PI * time_s) / wave.period_s
@@ -82,46 +93,73 @@ export function waveEnvelope({ start_s, end_s, rise_s }: Wave, time_s: number): 
   return fromEdge >= rise_s ? 1 : 0.5 - 0.5 * Math.cos((Math.PI * fromEdge) / rise_s)
 }
 
-/** A(z) = A exp(integral dz/2H) from the reference altitude, H = k T0/(m g); trapezoidal sums on the half points. */
-function amplitudeProfile(wave: Wave, air: RestingAir, grid: AltitudeGrid): Float64Array {
-  const z = grid.halfPoints_m
-  if (!wave.grows) return z.map(() => wave.amplitude_K)
-  const inverseTwiceHeight = z.map(
-    (_, i) =>
-      (AIR_MOLECULE_MASS * air.gravity_m_per_s2[i]) / (2 * BOLTZMANN * air.temperature_K[i]),
+/** A(z) = A exp(integral dz/2H) from the reference altitude; in hydrostatic air that is A sqrt(p_ref/p). */
+function amplitudeProfile(wave: Wave, air: RestingAir): Float64Array {
+  if (!wave.grows) return air.pressure_Pa.map(() => wave.amplitude_K)
+  const reference = readHermite(air.logPressure, wave.referenceAltitude_m)
+  return air.pressure_Pa.map(
+    (pressure) => wave.amplitude_K * Math.exp((reference - Math.log(pressure)) / 2),
   )
-  const exponent = new Float64Array(z.length)
-  for (let i = 1; i < z.length; i++) {
-    const mean = (inverseTwiceHeight[i - 1] + inverseTwiceHeight[i]) / 2
-    exponent[i] = exponent[i - 1] + mean * (z[i] - z[i - 1])
-  }
-  const spacing = z[1] - z[0]
-  const place = Math.min(
-    Math.max((wave.referenceAltitude_m - z[0]) / spacing, 0),
-    z.length - 1 - 1e-9,
-  )
-  const below = Math.floor(place)
-  const atReference = exponent[below] + (place - below) * (exponent[below + 1] - exponent[below])
-  return exponent.map((value) => wave.amplitude_K * Math.exp(value - atReference))
 }
 
 function heldShareOf(
   waves: readonly Wave[],
   amplitudes: readonly Float64Array[],
   stability: Float64Array,
+  spacing_m: number,
 ): Float64Array {
-  return stability.map((value, i) => {
+  const share = stability.map(() => 1)
+  for (let round = 0; round < HOLDING_ROUNDS; round++) {
+    const excess = excessSteepness(waves, amplitudes, stability, { share, spacing_m })
+    for (let i = 0; i < share.length; i++) share[i] /= excess[i]
+  }
+  const left = Math.max(1, ...excessSteepness(waves, amplitudes, stability, { share, spacing_m }))
+  return share.map((value) => value / left)
+}
+
+/** How far the waves exceed what they are held to, at least 1, on the half points. */
+function excessSteepness(
+  waves: readonly Wave[],
+  amplitudes: readonly Float64Array[],
+  stability: Float64Array,
+  { share, spacing_m }: { share: Float64Array; spacing_m: number },
+): Float64Array {
+  const heights = amplitudes.map((amplitude) =>
+    amplitude.map((value, i) => (share[i] * value) / stability[i]),
+  )
+  return stability.map((_, i) => {
     const steepness = waves.map(
-      (wave, w) => ((2 * Math.PI) / wave.verticalWavelength_m) * (amplitudes[w][i] / value),
+      (wave, w) => ((2 * Math.PI) / wave.verticalWavelength_m) * heights[w][i],
     )
-    const displaced = steepness.map((a, w) => a * waves[w].displacementShare)
-    return 1 / Math.max(1, likelyPeak(steepness), likelyPeak(displaced) / LARGEST_STRETCHING)
+    const stretching = waves.map(
+      (wave, w) =>
+        wave.displacementShare * Math.hypot(steepness[w], slopeAt(heights[w], i, spacing_m)),
+    )
+    return Math.max(
+      1,
+      likelyPeak(waves, steepness),
+      likelyPeak(waves, stretching) / LARGEST_STRETCHING,
+    )
   })
 }
 
-/** The plain sum, or three standard deviations of a sum with random phases where that is less. */
-function likelyPeak(amplitudes: readonly number[]): number {
-  const sum = amplitudes.reduce((total, a) => total + Math.abs(a), 0)
-  const variance = amplitudes.reduce((total, a) => total + (a * a) / 2, 0)
-  return Math.min(sum, 3 * Math.sqrt(variance))
+function slopeAt(values: Float64Array, i: number, spacing_m: number): number {
+  const [below, above] = [Math.max(i - 1, 0), Math.min(i + 1, values.length - 1)]
+  return (values[above] - values[below]) / ((above - below) * spacing_m)
+}
+
+/** Plain sum for named waves; for the members of a random field three standard deviations where that is less. */
+function likelyPeak(waves: readonly Wave[], amplitudes: readonly number[]): number {
+  let named = 0
+  let random = 0
+  let variance = 0
+  waves.forEach(({ isRandomMember }, w) => {
+    const amplitude = Math.abs(amplitudes[w])
+    if (!isRandomMember) named += amplitude
+    else {
+      random += amplitude
+      variance += (amplitude * amplitude) / 2
+    }
+  })
+  return named + Math.min(random, 3 * Math.sqrt(variance))
 }

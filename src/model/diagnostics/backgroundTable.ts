@@ -15,7 +15,7 @@ export interface BackgroundTable {
   errors: {
     /** Largest departure of the pressure difference across a cell from the weight of its air, relative. */
     hydrostatic: number
-    /** Smallest thickness of a displaced layer over that at rest. */
+    /** Smallest thickness of a displaced layer over that at rest, in the whole run. */
     smallest_stretching: number
     /** Smallest share of the requested wave amplitude that is left after holding it below the convective limit. */
     held_wave_share: number
@@ -93,7 +93,8 @@ const list: Computed<Background, Float64Array>[] = [
 ]
 
 export function backgroundTable(column: Column, time_s: number): BackgroundTable {
-  const basis = column.atmosphere.basis(0)
+  const { rebaseTimes_s } = column.atmosphere
+  const basis = column.atmosphere.basis(Math.max(0, ...rebaseTimes_s.filter((t) => t <= time_s)))
   const air = airAt(column, basis, time_s)
   const background = { column, air, gravity: basis.rest.gravity_m_per_s2 }
   return {
@@ -101,7 +102,7 @@ export function backgroundTable(column: Column, time_s: number): BackgroundTable
     columns: Object.fromEntries(list.map(({ name, compute }) => [name, compute(background)])),
     errors: {
       hydrostatic: hydrostaticError(column, basis.rest),
-      smallest_stretching: 1 + Math.min(...air.stretching),
+      smallest_stretching: column.survey.smallestStretching,
       held_wave_share: Math.min(...basis.waves.heldShare),
     },
   }

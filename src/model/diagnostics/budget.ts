@@ -1,12 +1,12 @@
 import type { Scenario } from '../scenario/types.ts'
 import type { Column } from '../state/column.ts'
 import { type ColumnTotals, columnTotals } from '../state/columnTotals.ts'
-import { initialState } from '../state/initialState.ts'
+import { totalsAtStart } from '../state/initialState.ts'
 import { NUCLEUS_ACCOUNTS, WATER_ACCOUNTS } from '../state/layout.ts'
 import { HOUR, MICROGRAM } from '../units.ts'
 import { iceWaterContent } from './profileVariables.ts'
 import { type Computed, describe, type Variable, variable } from './variables.ts'
-import { airAt, type View } from './view.ts'
+import type { View } from './view.ts'
 
 /** The account of a column at one time. */
 interface Account {
@@ -128,22 +128,17 @@ export function columnIce(view: View): number {
 }
 
 /** Totals at the start of the run, worked out once per column. */
-const initialTotals = new WeakMap<Column, ColumnTotals>()
+const startOf = new WeakMap<Column, ColumnTotals>()
 
-function totalsAtStart(column: Column): ColumnTotals {
-  let totals = initialTotals.get(column)
-  if (totals === undefined) {
-    const basis = column.atmosphere.basis(0)
-    const y = initialState(column.scenario, column, basis, airAt(column, basis, 0))
-    totals = columnTotals(y, column)
-    initialTotals.set(column, totals)
-  }
-  return totals
+function initialTotals(column: Column): ColumnTotals {
+  const known = startOf.get(column) ?? totalsAtStart(column)
+  startOf.set(column, known)
+  return known
 }
 
 export function budget(view: View): Record<string, number> {
   const { column, moment } = view
-  const account = { view, now: columnTotals(moment.y, column), initial: totalsAtStart(column) }
+  const account = { view, now: columnTotals(moment.y, column), initial: initialTotals(column) }
   return Object.fromEntries(
     computedBudget(column.scenario).map(({ name, compute }) => [name, compute(account)]),
   )

@@ -43,6 +43,7 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
   const { numerics } = column.scenario
   const absoluteTolerance = makeAbsoluteTolerances(column)
   const relativeTolerance = makeRelativeTolerances(column)
+  const longestStep_s = longestStep(column)
   const statistics: SolverStatistics = { evaluations: 0, acceptedSteps: 0, largestStep_s: 0 }
   const derivative = (time_s: number, y: number[], dy: number[]) => {
     statistics.evaluations++
@@ -57,6 +58,9 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
         initialStepSize: stepSize_s,
         maxSteps: numerics.maxStepsPerInterval,
         maxExtrapolationColumns: numerics.extrapolationColumns,
+        maxStepSize: longestStep_s,
+        // The error estimate notices instability as well; this check would cost a fifth of the solver's time.
+        stabilityCheckCount: 0,
         denseOutput: false,
         rawFunction: true,
       })
@@ -81,6 +85,24 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
       return { y: Float64Array.from(y), stepSize_s: isShort ? stepSize_s : largest }
     },
   }
+}
+
+/**
+ * Upwind passage of classes at a rate a is stable in the solver's second column while a h stays below this: the radius
+ * of the circle -a h (1 - e^(i phi)) that its stability function keeps below one; computed from that function.
+ */
+const STABLE_PASSAGE = 2.18
+
+/** A shorter ceiling than this hardly ever holds, and says nothing about the stable step, s. */
+const BINDING_CEILING = 10
+
+/**
+ * Where ice sublimates at its ceiling, longer steps only get rejected; 0 is no limit. Limits that wander with the
+ * state are left to the error estimate.
+ */
+function longestStep({ scenario }: Column): number {
+  const ceiling_s = scenario.numerics.sublimationCeiling_s
+  return scenario.processes.growth && ceiling_s >= BINDING_CEILING ? STABLE_PASSAGE * ceiling_s : 0
 }
 
 function refuseNonFinite(column: Column, y: readonly number[], time_s: number): void {

@@ -4,6 +4,7 @@ export interface Options {
   initialStepSize: number
   maxStepSize: number
   maxExtrapolationColumns: number
+  stabilityCheckCount: number
   denseOutput: boolean
   relativeTolerance: number | number[]
   absoluteTolerance: number | number[]

@@ -77,7 +77,9 @@ function checkAmount(path: Path, change: Perturbation): ScenarioProblem[] {
   if (change.factor !== undefined && change.factor < least) {
     return [problem([...path, 'factor'], `${change.factor} is not allowed; allowed: 0 or more`)]
   }
-  return change.quantity === 'temperature' && change.factor === 0
+  const isRampOfAmount =
+    change.time.shape === 'ramp' && (change.quantity === 'water' || change.quantity === 'nuclei')
+  return change.factor === 0 && (change.quantity === 'temperature' || isRampOfAmount)
     ? [problem([...path, 'factor'], '0 is not allowed; allowed: above 0')]
     : []
 }

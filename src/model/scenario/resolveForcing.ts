@@ -11,10 +11,13 @@ type PerturbationDocument = ScenarioDocument['perturbations'][number]
 /** The named waves and, after them, the members of the random superposition. */
 export function resolveWaves({ waves, random_waves }: ScenarioDocument): Wave[] {
   const members = random_waves === undefined ? [] : randomWaves(random_waves)
-  return [...waves, ...members].map(resolveWave)
+  return [
+    ...waves.map((wave) => resolveWave(wave, false)),
+    ...members.map((wave) => resolveWave(wave, true)),
+  ]
 }
 
-function resolveWave(wave: WaveDocument): Wave {
+function resolveWave(wave: WaveDocument, isRandomMember: boolean): Wave {
   return {
     amplitude_K: wave.amplitude_K,
     referenceAltitude_m: wave.at_km * KILOMETRE,
@@ -26,6 +29,7 @@ function resolveWave(wave: WaveDocument): Wave {
     rise_s: wave.rise_h * HOUR,
     displacementShare: wave.displacement_share,
     grows: wave.grows,
+    isRandomMember,
   }
 }
 

@@ -68,6 +68,8 @@ export interface Wave {
   displacementShare: number
   /** Whether the amplitude grows as exp(z/2H) away from the reference altitude. */
   grows: boolean
+  /** Whether it is a member of the random superposition, whose phases are independent. */
+  isRandomMember: boolean
 }
 
 export type PerturbedQuantity = 'temperature' | 'water' | 'wind' | 'mixing' | 'nuclei'

@@ -1,8 +1,14 @@
 import type { AirState } from '../atmosphere/airState.ts'
-import type { AirBasis } from '../atmosphere/atmosphere.ts'
+import type { AirBasis, Atmosphere } from '../atmosphere/atmosphere.ts'
 import { centrePoint, type RadiusClasses } from '../grid.ts'
 import type { Scenario } from '../scenario/types.ts'
 import type { ColumnAxes } from './axes.ts'
+import { type ColumnTotals, columnTotals } from './columnTotals.ts'
+
+interface PreparedColumn extends ColumnAxes {
+  scenario: Scenario
+  atmosphere: Atmosphere
+}
 
 /** Background vapour and nuclei, and the ice that the scenario starts with. */
 export function initialState(
@@ -47,4 +53,12 @@ function logNormalShares(
   })
   const sum = weights.reduce((total, weight) => total + weight, 0)
   return weights.map((weight) => weight / sum)
+}
+
+/** Column totals of the state at time zero. */
+export function totalsAtStart(column: PreparedColumn): ColumnTotals {
+  const { atmosphere, scenario } = column
+  const basis = atmosphere.basis(0)
+  const air = atmosphere.read(basis, 0, { from_s: 0, to_s: 0 })
+  return columnTotals(initialState(scenario, column, basis, air), column)
 }

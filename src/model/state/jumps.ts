@@ -1,5 +1,6 @@
 import type { AirBasis } from '../atmosphere/atmosphere.ts'
 import { altitudeWeight, perturbed } from '../atmosphere/perturbation.ts'
+import { ModelError } from '../errors.ts'
 import { centrePoint } from '../grid.ts'
 import type { NucleusClass, Perturbation } from '../scenario/types.ts'
 import type { ColumnAxes } from './axes.ts'
@@ -7,6 +8,8 @@ import type { ColumnAxes } from './axes.ts'
 /**
  * Changes vapour or free nuclei at once by a stepped perturbation and books the change.
  * The state is changed in place.
+ *
+ * @throws ModelError where the perturbation takes away more than there is
  */
 export function inject(
   y: Float64Array,
@@ -21,6 +24,7 @@ export function inject(
       const density = rest.density_per_m3[centrePoint(level)]
       const index = layout.vapour + level
       const changed = perturbed(change, y[index] / density, weight) * density
+      refuseOverdraft(change, changed, y[index], grid.centres_m[level])
       y[layout.waterAccount.injection] += (changed - y[index]) * grid.spacing_m
       y[index] = changed
     } else {
@@ -28,11 +32,27 @@ export function inject(
         const index = layout.nuclei + level * layout.nucleusClasses + j
         const part = change.mode === 'add' ? { ...change, amount: change.amount * share } : change
         const changed = perturbed(part, y[index], weight)
+        refuseOverdraft(change, changed, y[index], grid.centres_m[level])
         y[layout.nucleusAccount.injection + j] += (changed - y[index]) * grid.spacing_m
         y[index] = changed
       })
     }
   }
+}
+
+function refuseOverdraft(
+  { quantity, time }: Perturbation,
+  changed: number,
+  present: number,
+  altitude_m: number,
+): void {
+  if (changed >= 0 || present < 0) return
+  const time_s = 'start_s' in time ? time.start_s : 0
+  throw new ModelError(`a perturbation takes away more ${quantity} than there is`, {
+    time_s,
+    altitude_m,
+    quantity,
+  })
 }
 
 /** Moves the state to another air density with all mixing ratios held, and books the change of the column. */

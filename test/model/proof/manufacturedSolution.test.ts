@@ -43,6 +43,7 @@ function manufacturedColumn(levels: number, classes: number, relativeTolerance: 
             phase_rad,
             displacementShare: 1,
             grows: false,
+            isRandomMember: false,
             ...standing,
           },
         ],

@@ -18,6 +18,7 @@ describe('waves and perturbations', () => {
         rise_s: 3600,
         displacementShare: 1,
         grows: true,
+        isRandomMember: false,
       },
     ])
   })
