@@ -1,4 +1,4 @@
-import type { AirBasis, Interval } from './atmosphere/atmosphere.ts'
+import { type AirBasis, type Interval, SAME_TIME } from './atmosphere/atmosphere.ts'
 import { isNeutral } from './atmosphere/perturbation.ts'
 import { makeIntegrator, type SolverStatistics } from './integrate/integrate.ts'
 import type { Perturbation } from './scenario/types.ts'
@@ -81,15 +81,21 @@ export function outputTimes({ scenario }: Column): number[] {
 
 /** The intervals between break points and output times from a time on. */
 export function intervals(column: Column, from_s: number): OutputInterval[] {
-  const outputs = new Set(outputTimes(column))
-  const edges = [...new Set([...outputs, ...column.atmosphere.breakPoints_s])]
-    .filter((time) => time > from_s)
-    .sort((a, b) => a - b)
+  const outputs = outputTimes(column)
+  const breaks = column.atmosphere.breakPoints_s.filter(
+    (time) => !outputs.some((output) => isSame(output, time)),
+  )
+  const edges = [...outputs, ...breaks].filter((time) => time > from_s).sort((a, b) => a - b)
+  const isOutput = new Set(outputs)
   return edges.map((to_s, i) => ({
     from_s: i === 0 ? from_s : edges[i - 1],
     to_s,
-    output: outputs.has(to_s),
+    output: isOutput.has(to_s),
   }))
+}
+
+function isSame(time_s: number, other_s: number): boolean {
+  return Math.abs(time_s - other_s) <= SAME_TIME
 }
 
 function beginInterval(
@@ -100,7 +106,7 @@ function beginInterval(
 ): { snapshot: Snapshot; basis: AirBasis } {
   const { atmosphere, scenario } = column
   const arriving = scenario.perturbations.filter((change) => arrivesAt(change, from_s))
-  const rebasing = atmosphere.rebaseTimes_s.includes(from_s)
+  const rebasing = atmosphere.rebaseTimes_s.some((time) => isSame(time, from_s))
   if (arriving.length === 0 && !rebasing) return { snapshot, basis }
   const y = snapshot.y.slice()
   const next = rebasing ? atmosphere.basis(from_s) : basis
@@ -117,7 +123,7 @@ function arrivesAt(change: Perturbation, time_s: number): boolean {
   return (
     (quantity === 'water' || quantity === 'nuclei') &&
     (time.shape === 'step' || time.shape === 'pulse') &&
-    time.start_s === time_s &&
+    isSame(time.start_s, time_s) &&
     time_s > 0 &&
     !isNeutral(change)
   )

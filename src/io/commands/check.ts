@@ -27,7 +27,7 @@ export const checkCommand: Command = {
   },
   examples: [
     ['mesofrost check my.yaml', 'before running it'],
-    ['mesofrost check hour-wave --at 30min', 'the air as the wave has moved it'],
+    ['mesofrost check wave-one-hour --at 30min', 'the air as the wave has moved it'],
     [
       'mesofrost check quiet-night --set temperature.offset_K=5',
       'a warmer night: hydrostatics solved again',

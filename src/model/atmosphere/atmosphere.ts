@@ -22,6 +22,15 @@ export interface Interval {
   to_s: number
 }
 
+/** Instants closer than this are one: they differ by the rounding of hours to seconds alone, s. */
+export const SAME_TIME = 1e-6
+
+/** Instants in order, of those that are one the earliest. */
+export function distinctTimes(times_s: readonly number[]): number[] {
+  const sorted = [...times_s].sort((a, b) => a - b)
+  return sorted.filter((time, i) => i === 0 || time - sorted[i - 1] > SAME_TIME)
+}
+
 /**
  * The prescribed air. Density n0 and pressure p0 belong to a basis and stay fixed in time until the next one;
  * waves displace the air; perturbations act at fixed n0 and p0.
@@ -203,7 +212,7 @@ function breakPoints(scenario: Scenario): number[] {
     ...rebaseTimes(scenario),
     ...scenario.numerics.breakPoints_s,
   ]
-  return [...new Set(times.filter((time) => time > 0 && time < duration_s))].sort((a, b) => a - b)
+  return distinctTimes(times.filter((time) => time > 0 && time < duration_s))
 }
 
 function rebaseTimes({ background, duration_s }: Scenario): number[] {

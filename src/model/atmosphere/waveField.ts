@@ -33,8 +33,8 @@ export const LARGEST_STRETCHING = 0.7
 /** Stability below which air counts as neutral and carries no wave, K/m. */
 const NEUTRAL_STABILITY = 1e-6
 
-/** Rounds of holding: a held amplitude has a gradient of its own. */
-const HOLDING_ROUNDS = 5
+/** Height over which holding is made smooth, m. */
+const HOLDING_REACH = 1000
 
 interface PreparedWave {
   wave: Wave
@@ -46,7 +46,10 @@ interface PreparedWave {
 export function waveField(waves: readonly Wave[], air: RestingAir, grid: AltitudeGrid): WaveField {
   const stability = air.stability_K_per_m.map((value) => Math.max(value, NEUTRAL_STABILITY))
   const amplitudes = waves.map((wave) => amplitudeProfile(wave, air))
-  const heldShare = heldShareOf(waves, amplitudes, stability, grid.spacing_m / 2)
+  const heldShare =
+    waves.length === 0
+      ? stability.map(() => 1)
+      : heldShareOf(waves, amplitudes, stability, grid.spacing_m / 2)
   const prepared = waves.map((wave, w): PreparedWave => {
     const held = amplitudes[w].map((amplitude, i) => amplitude * heldShare[i])
     const phase = grid.halfPoints_m.map(
@@ -102,45 +105,68 @@ function amplitudeProfile(wave: Wave, air: RestingAir): Float64Array {
   )
 }
 
+/**
+ * The share that holds the waves at every height. That of the stretching is made smooth, so that it adds little slope
+ * of its own: the least value within HOLDING_REACH, averaged over as much, which never exceeds the share at the height
+ * itself. What slope is added all the same is taken off everywhere.
+ */
 function heldShareOf(
   waves: readonly Wave[],
   amplitudes: readonly Float64Array[],
   stability: Float64Array,
   spacing_m: number,
 ): Float64Array {
-  const share = stability.map(() => 1)
-  for (let round = 0; round < HOLDING_ROUNDS; round++) {
-    const excess = excessSteepness(waves, amplitudes, stability, { share, spacing_m })
-    for (let i = 0; i < share.length; i++) share[i] /= excess[i]
-  }
-  const left = Math.max(1, ...excessSteepness(waves, amplitudes, stability, { share, spacing_m }))
+  const heights = amplitudes.map((amplitude) => amplitude.map((value, i) => value / stability[i]))
+  const reach = Math.ceil(HOLDING_REACH / spacing_m)
+  const least = overWindow(
+    stretchingExcess(waves, heights, spacing_m),
+    reach,
+    (window) => 1 / Math.max(...window),
+  )
+  const smooth = overWindow(
+    least,
+    reach,
+    (window) => window.reduce((sum, value) => sum + value, 0) / window.length,
+  )
+  const convective = convectiveExcess(waves, heights)
+  const share = smooth.map((value, i) => Math.min(value, 1 / convective[i]))
+  const held = heights.map((height) => height.map((value, i) => value * share[i]))
+  const left = Math.max(...stretchingExcess(waves, held, spacing_m))
   return share.map((value) => value / left)
 }
 
-/** How far the waves exceed what they are held to, at least 1, on the half points. */
-function excessSteepness(
-  waves: readonly Wave[],
-  amplitudes: readonly Float64Array[],
-  stability: Float64Array,
-  { share, spacing_m }: { share: Float64Array; spacing_m: number },
+function overWindow(
+  values: Float64Array,
+  reach: number,
+  combine: (window: Float64Array) => number,
 ): Float64Array {
-  const heights = amplitudes.map((amplitude) =>
-    amplitude.map((value, i) => (share[i] * value) / stability[i]),
-  )
-  return stability.map((_, i) => {
-    const steepness = waves.map(
-      (wave, w) => ((2 * Math.PI) / wave.verticalWavelength_m) * heights[w][i],
-    )
-    const stretching = waves.map(
-      (wave, w) =>
-        wave.displacementShare * Math.hypot(steepness[w], slopeAt(heights[w], i, spacing_m)),
-    )
-    return Math.max(
+  return values.map((_, i) => combine(values.subarray(Math.max(0, i - reach), i + reach + 1)))
+}
+
+const wavenumber = ({ verticalWavelength_m }: Wave) => (2 * Math.PI) / verticalWavelength_m
+
+/** How far the sum of |m| b exceeds the convective limit, at least 1, on the half points. */
+function convectiveExcess(waves: readonly Wave[], heights: readonly Float64Array[]): Float64Array {
+  return heights[0].map((_, i) =>
+    Math.max(
       1,
-      likelyPeak(waves, steepness),
-      likelyPeak(waves, stretching) / LARGEST_STRETCHING,
-    )
-  })
+      likelyPeak(waves, (wave, w) => wavenumber(wave) * heights[w][i]),
+    ),
+  )
+}
+
+/** How far the largest |d zeta/dz| exceeds LARGEST_STRETCHING, at least 1, on the half points. */
+function stretchingExcess(
+  waves: readonly Wave[],
+  heights: readonly Float64Array[],
+  spacing_m: number,
+): Float64Array {
+  const steepness = (wave: Wave, w: number, i: number) =>
+    wave.displacementShare *
+    Math.hypot(wavenumber(wave) * heights[w][i], slopeAt(heights[w], i, spacing_m))
+  return heights[0].map((_, i) =>
+    Math.max(1, likelyPeak(waves, (wave, w) => steepness(wave, w, i)) / LARGEST_STRETCHING),
+  )
 }
 
 function slopeAt(values: Float64Array, i: number, spacing_m: number): number {
@@ -149,13 +175,16 @@ function slopeAt(values: Float64Array, i: number, spacing_m: number): number {
 }
 
 /** Plain sum for named waves; for the members of a random field three standard deviations where that is less. */
-function likelyPeak(waves: readonly Wave[], amplitudes: readonly number[]): number {
+function likelyPeak(
+  waves: readonly Wave[],
+  amplitudeOf: (wave: Wave, index: number) => number,
+): number {
   let named = 0
   let random = 0
   let variance = 0
-  waves.forEach(({ isRandomMember }, w) => {
-    const amplitude = Math.abs(amplitudes[w])
-    if (!isRandomMember) named += amplitude
+  waves.forEach((wave, w) => {
+    const amplitude = Math.abs(amplitudeOf(wave, w))
+    if (!wave.isRandomMember) named += amplitude
     else {
       random += amplitude
       variance += (amplitude * amplitude) / 2

@@ -93,7 +93,7 @@ export function makeIntegrator(column: Column, tendency: Tendency): Integrator {
  */
 const STABLE_PASSAGE = 2.18
 
-/** A shorter ceiling than this hardly ever holds, and says nothing about the stable step, s. */
+/** A ceiling shorter than this hardly ever holds, and says nothing about the stable step, s. */
 const BINDING_CEILING = 10
 
 /**
