@@ -68,7 +68,7 @@ const randomWave = (random: RandomStream) => ({
 function randomPerturbations(random: RandomStream): ScenarioInput['perturbations'] {
   const ramp = { shape: 'ramp' as const, start_h: 0, rise_h: 3 }
   return [
-    { quantity: 'water', add_ppmv: between(random, -1, 2), time: ramp },
+    { quantity: 'water', add_ppmv: between(random, 0, 2), time: ramp },
     { quantity: 'nuclei', factor: between(random, 0.5, 3), time: ramp },
     {
       quantity: 'temperature',

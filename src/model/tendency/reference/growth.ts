@@ -37,12 +37,19 @@ function edgeFluxes(now: Situation, level: number): Float64Array {
   const first = layout.ice + level * sizes.count
   const ice = now.y.subarray(first, first + sizes.count)
   const halfSlope = (k: number) =>
-    k === 0 || k === sizes.count - 1 ? 0 : halfVanLeerSlope(ice[k] - ice[k - 1], ice[k + 1] - ice[k])
+    k === 0 || k === sizes.count - 1
+      ? 0
+      : halfVanLeerSlope(ice[k] - ice[k - 1], ice[k + 1] - ice[k])
   return sizes.edges_m.map((radius_m, k) => {
     const rate = radiusRate(now, level, radius_m) / sizes.edgeSpacing_m[k]
     if (k === sizes.count || (k === 0 && rate > 0)) return 0
     if (rate > 0) return rate * (ice[k - 1] + halfSlope(k - 1))
-    return sublimationFlux(rate, ice[k], halfSlope(k), now.column.scenario.numerics.sublimationCeiling_s)
+    return sublimationFlux(
+      rate,
+      ice[k],
+      halfSlope(k),
+      now.column.scenario.numerics.sublimationCeiling_s,
+    )
   })
 }
 

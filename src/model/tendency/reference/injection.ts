@@ -14,8 +14,7 @@ export function injection({ column, rest, air, y }: Situation, dy: Float64Array)
     dy[layout.waterAccount.injection] += water * grid.spacing_m
     scenario.background.nucleusClasses.forEach(({ share }, j) => {
       const place = layout.nuclei + level * layout.nucleusClasses + j
-      const nuclei =
-        density * share * nucleiAdded_per_s[point] + y[place] * nucleiGain_per_s[point]
+      const nuclei = density * share * nucleiAdded_per_s[point] + y[place] * nucleiGain_per_s[point]
       dy[place] += nuclei
       dy[layout.nucleusAccount.injection + j] += nuclei * grid.spacing_m
     })

@@ -32,7 +32,8 @@ export function nucleation(now: Situation, dy: Float64Array): void {
       dy[lower + 1] += born * upperShare
       dy[layout.vapour + level] -=
         born *
-        ((1 - upperShare) * sizes.molecules[lowerClass] + upperShare * sizes.molecules[lowerClass + 1])
+        ((1 - upperShare) * sizes.molecules[lowerClass] +
+          upperShare * sizes.molecules[lowerClass + 1])
     })
   }
 }
@@ -57,7 +58,11 @@ function nucleationConditions(now: Situation, level: number): LevelConditions {
 }
 
 /** J of one nucleus, below the ceiling, 1/s. */
-function ratePerNucleus({ column }: Situation, level: LevelConditions, nucleusRadius_m: number): number {
+function ratePerNucleus(
+  { column }: Situation,
+  level: LevelConditions,
+  nucleusRadius_m: number,
+): number {
   const { nucleation: parameters, numerics } = column.scenario
   const activationTime_s = numerics.nucleationCeiling_s
   const rate =

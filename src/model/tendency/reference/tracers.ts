@@ -66,7 +66,10 @@ function nucleusAccounts(
 }
 
 /** Mixing ratios of a tracer from the cell outside below to the cell outside above, levels + 2 values. */
-export function mixingRatios(now: Situation, { kind, member, start, stride }: Tracer): Float64Array {
+export function mixingRatios(
+  now: Situation,
+  { kind, member, start, stride }: Tracer,
+): Float64Array {
   const { column, rest, air, y } = now
   const { levels } = column.grid
   const q = new Float64Array(levels + 2)
@@ -76,7 +79,8 @@ export function mixingRatios(now: Situation, { kind, member, start, stride }: Tr
   const top = air.water.length - 1
   const share = kind === 'nuclei' ? column.scenario.background.nucleusClasses[member].share : 0
   if (kind === 'vapour') [q[0], q[levels + 1]] = [air.water[0], air.water[top]]
-  else if (kind === 'nuclei') [q[0], q[levels + 1]] = [air.nuclei[0] * share, air.nuclei[top] * share]
+  else if (kind === 'nuclei')
+    [q[0], q[levels + 1]] = [air.nuclei[0] * share, air.nuclei[top] * share]
   else [q[0], q[levels + 1]] = [q[1], q[levels]]
   return q
 }

@@ -19,23 +19,18 @@ export function verticalMotion(now: Situation, dy: Float64Array): void {
 
 /** Upward flux of vapour, nuclei or ice of one class through every face by wind and fall, 1/(m2 s). */
 export function motionFlux(now: Situation, tracer: Tracer): Float64Array {
-  const { levels } = now.column.grid
-  const flux = upwindFlux(mixingRatios(now, tracer), airFlux(now, tracer))
-  if (tracer.kind === 'ice') {
-    flux[0] = Math.min(flux[0], 0)
-    flux[levels] = Math.max(flux[levels], 0)
-  }
-  return flux
+  return upwindFlux(mixingRatios(now, tracer), airFlux(now, tracer))
 }
 
-/** Flux of air relative to the particles through every face, n0 w - n0 v/(1 + Z), 1/(m2 s). */
+/** Flux of air that passes the particles through every face, n0 w - n0 v/(1 + Z), 1/(m2 s); for ice outward only. */
 function airFlux(now: Situation, { kind, member }: Tracer): Float64Array {
   const { grid, sizes } = now.column
-  return grid.faces_m.map((_, face) =>
-    kind === 'ice'
-      ? windFlux(now, face) - fallFlux(now, face, sizes.radii_m[member])
-      : windFlux(now, face),
-  )
+  const wind = grid.faces_m.map((_, face) => windFlux(now, face))
+  if (kind !== 'ice') return wind
+  const flux = wind.map((upward, face) => upward - fallFlux(now, face, sizes.radii_m[member]))
+  flux[0] = Math.min(flux[0], 0)
+  flux[grid.levels] = Math.max(flux[grid.levels], 0)
+  return flux
 }
 
 /** Downward flux of air that a falling particle passes, n0 v(r)/(1 + Z), 1/(m2 s). */
