@@ -14,6 +14,7 @@ import {
 import { basename, dirname, join, resolve } from 'node:path'
 import { InputError } from '../model/errors.ts'
 import { findRunRecord } from './runRecord.ts'
+import { holdsExperiment } from './study/experimentRecord.ts'
 
 /** Where the output of a run shall go. */
 export interface RunTarget {
@@ -25,6 +26,8 @@ export interface RunTarget {
   scenarioName: string
   /** Against which relative paths are meant. */
   workingDirectory: string
+  /** Told where the files will grow, before that directory is made: a run killed at once leaves nothing unnamed. */
+  announce?(partialPath: string): void
 }
 
 /** A directory in the making: nothing stands under the final name before `publish`. */
@@ -36,7 +39,7 @@ export interface RunDirectory {
 }
 
 /** A name that is safe as a directory: other characters than letters, digits, dot, dash, underscore become dashes. */
-function directoryName(scenarioName: string): string {
+export function directoryName(scenarioName: string): string {
   return scenarioName.replace(/[^\p{L}\p{N}._-]+/gu, '-').replace(/^[.-]+|-+$/g, '') || 'run'
 }
 
@@ -53,19 +56,24 @@ function isTaken(path: string): boolean {
   }
 }
 
+function isOurOutput(path: string): boolean {
+  return findRunRecord(join(path, 'run.json')) !== null || holdsExperiment(path)
+}
+
 function refuseUnlessFree(path: string, force: boolean): void {
   if (!isTaken(path) || isEmptyDirectory(path)) return
   if (!force)
     throw new InputError(
       `${path} exists already; give another --out, or --force to replace an earlier run`,
     )
-  if (!lstatSync(path).isDirectory() || findRunRecord(join(path, 'run.json')) === null)
+  if (!lstatSync(path).isDirectory() || !isOurOutput(path))
     throw new InputError(
       `${path} is not the output of a mesofrost run (no run.json of ours in it), so --force does not replace it`,
     )
 }
 
-function nextFree(parent: string, name: string): string {
+/** The name with the next free number in a directory. */
+export function nextFree(parent: string, name: string): string {
   const taken = existsSync(parent) ? readdirSync(parent) : []
   const numbers = taken.flatMap((entry) => {
     const number = entry.startsWith(`${name}-`) ? entry.slice(name.length + 1) : ''
@@ -123,7 +131,8 @@ function makeWithParents(path: string): void {
   }
 }
 
-function makeDirectory(path: string): void {
+/** With its parents; throws an InputError where that cannot be. */
+export function makeDirectory(path: string): void {
   try {
     makeWithParents(path)
   } catch (error) {
@@ -142,6 +151,7 @@ export function createRunDirectory(target: RunTarget): RunDirectory {
   makeDirectory(parent)
   const label = wanted === null ? name : basename(wanted)
   const partialPath = join(parent, `.${label}.partial-${randomBytes(4).toString('hex')}`)
+  target.announce?.(partialPath)
   makeDirectory(partialPath)
   return {
     partialPath,

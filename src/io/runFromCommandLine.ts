@@ -75,16 +75,16 @@ export async function runFromCommandLine(
   })
   const from = await findStart(args, source, terminal.workingDirectory)
   if (!args.quiet) for (const warning of loaded.warnings) warn(terminal, `warning: ${warning}`)
-  const begin: RunRequest['begin'] = async (range, partialPath) => {
-    if (args.quiet) return silentProgress
-    warn(terminal, `working in ${typedPath(partialPath, terminal)}`)
-    return showProgress(terminal, range)
-  }
+  const begin: RunRequest['begin'] = async (range) =>
+    args.quiet ? silentProgress : showProgress(terminal, range)
   const target = {
     out: args.out,
     force: args.force,
     scenarioName: source.earlier?.record.name ?? fileStem(loaded.sourcePath),
     workingDirectory: terminal.workingDirectory,
+    announce(partialPath: string) {
+      if (!args.quiet) warn(terminal, `working in ${typedPath(partialPath, terminal)}`)
+    },
   }
   const stop = context.watchStopSignals()
   try {

@@ -25,8 +25,8 @@ export interface RunRequest {
   identity: ModelIdentity
   model: ColumnModel
   stop: { signal(): StopSignal | null }
-  /** Told once, when the run begins, where its files grow meanwhile. */
-  begin(range: ProgressRange, partialPath: string): Promise<RunProgress>
+  /** Called once, when the run begins. */
+  begin(range: ProgressRange): Promise<RunProgress>
 }
 
 export type RunOutcome =
@@ -105,10 +105,10 @@ async function openRun(
       identity,
       writeSizes: sizes.write,
     }),
-    progress: await request.begin(
-      { start_s: from?.saved.snapshot.time_s ?? 0, end_s: scenario.duration_s },
-      directory.partialPath,
-    ),
+    progress: await request.begin({
+      start_s: from?.saved.snapshot.time_s ?? 0,
+      end_s: scenario.duration_s,
+    }),
     stateInterval_s: document.output.state_every_h * 3600,
     unsaved: null,
     savedIntervals: -1,

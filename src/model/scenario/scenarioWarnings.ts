@@ -10,6 +10,7 @@ export function scenarioWarnings(document: ScenarioDocument): string[] {
     ...particleWarnings(document),
     ...gridWarnings(document),
     ...idleWarnings(document),
+    ...ceilingWarnings(document),
   ]
 }
 
@@ -79,6 +80,19 @@ function gridWarnings({ grid }: ScenarioDocument): string[] {
   return grid.bottom_km < 60 || grid.top_km > 105
     ? [
         `grid: ${grid.bottom_km} to ${grid.top_km} km reaches outside 60 to 105 km, where the composition of the air is not that of the ground or drag is not free-molecular`,
+      ]
+    : []
+}
+
+/** Classes for which the default ceilings have been tested, and the ceiling there, s. */
+const TESTED = { classes: 96, ceiling_s: 60 }
+
+/** The ceiling counts classes: finer classes shrink slower by it. */
+function ceilingWarnings({ sizes, numerics }: ScenarioDocument): string[] {
+  const least_s = (numerics.sublimation_ceiling_s * sizes.classes) / TESTED.classes
+  return least_s > TESTED.ceiling_s
+    ? [
+        `numerics.sublimation_ceiling_s: ${numerics.sublimation_ceiling_s} s for one of ${sizes.classes} classes may hold back sublimation; ${Math.floor((TESTED.ceiling_s * TESTED.classes) / sizes.classes)} s or less is tested`,
       ]
     : []
 }

@@ -66,6 +66,11 @@ describe('what lies outside a measured range is allowed with a warning', () => {
       { grid: { top_km: 106 }, ...everything(50, 110) },
       'grid: 77 to 106 km reaches outside 60 to 105 km',
     ],
+    [
+      'a ceiling too slow for fine classes',
+      { sizes: { classes: 192 } },
+      'numerics.sublimation_ceiling_s: 60 s for one of 192 classes may hold back sublimation; 30 s or less is tested',
+    ],
   ])('%s', (_, document, warning) => {
     const { warnings } = resolve(document)
     expect(warnings).toHaveLength(1)
