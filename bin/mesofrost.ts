@@ -21,6 +21,7 @@ process.exitCode = await commandLine(process.argv.slice(2), {
     calledAs: process.env.npm_command === undefined ? 'mesofrost' : 'npx mesofrost',
   },
   scenarioDirectory: fileURLToPath(new URL('../../scenarios', import.meta.url)),
+  memberWorker: fileURLToPath(new URL('./memberWorker.js', import.meta.url)),
   identity: readModelIdentity(builtDirectory),
   watchStopSignals,
 })

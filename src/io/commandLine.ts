@@ -3,16 +3,28 @@ import { InputError } from '../model/errors.ts'
 import { nearestWord } from '../model/scenario/nearestWord.ts'
 import type { Command, CommandArguments, CommandContext } from './command.ts'
 import { checkCommand } from './commands/check.ts'
+import { compareCommand } from './commands/compare.ts'
+import { convergeCommand } from './commands/converge.ts'
+import { perturbCommand } from './commands/perturb.ts'
+import { responseMapCommand } from './commands/responseMap.ts'
 import { runCommand } from './commands/run.ts'
 import { scenariosCommand } from './commands/scenarios.ts'
 import { schemaCommand } from './commands/schema.ts'
 import { showCommand } from './commands/show.ts'
+import { sweepCommand } from './commands/sweep.ts'
+import { sweepGatherCommand } from './commands/sweepGather.ts'
 import { variablesCommand } from './commands/variables.ts'
 import { BAD_INPUT, DONE, EXIT_CODES, FAILED } from './exitCodes.ts'
 import { print, warn } from './terminal.ts'
 
 const COMMANDS: Command[] = [
   runCommand,
+  perturbCommand,
+  compareCommand,
+  responseMapCommand,
+  sweepCommand,
+  sweepGatherCommand,
+  convergeCommand,
   checkCommand,
   scenariosCommand,
   showCommand,
@@ -43,9 +55,15 @@ function suggestion(word: string, known: readonly string[], mark: string): strin
   return nearest === null ? '' : `; did you mean ${mark}${nearest}?`
 }
 
+/** The first word that names a command; a later one may be the name of a directory. */
+function commandOf(words: string[]): Command | undefined {
+  const name = words.find((word) => COMMANDS.some((command) => command.name === word))
+  return COMMANDS.find((command) => command.name === name)
+}
+
 /** yargs names only the unknown word; whether it was an option or a command shows in the command line. */
 function unknownWord(word: string, words: string[]): InputError {
-  const command = COMMANDS.find(({ name }) => words.includes(name))
+  const command = commandOf(words)
   const isOption = words.some(
     (given) => given.startsWith('-') && given.replace(/^-+/, '').split('=')[0] === word,
   )
@@ -65,7 +83,7 @@ function usageError(message: string, words: string[]): InputError {
   if (unknown !== null) return unknownWord(unknown[1], words)
   const hungry = /^Not enough arguments following: (\w+)/.exec(message)
   if (hungry !== null) return new InputError(`--${hungry[1]} needs a value`)
-  const command = COMMANDS.find(({ name }) => words.includes(name))
+  const command = commandOf(words)
   if (message.startsWith('Not enough non-option arguments') && command !== undefined)
     return new InputError(
       `mesofrost ${command.name} needs ${command.usage}; mesofrost ${command.name} --help tells more`,

@@ -5,3 +5,4 @@ export const EXIT_CODES = `Exit codes: 0 done, 1 the run failed, 2 bad input, 3 
 export const DONE = 0
 export const FAILED = 1
 export const BAD_INPUT = 2
+export const MEMBERS_FAILED = 3

@@ -1,4 +1,4 @@
-import { existsSync, mkdtempSync, readdirSync, rmSync } from 'node:fs'
+import { mkdtempSync, readdirSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
@@ -15,7 +15,7 @@ import {
 } from '../support/brokenSweep.ts'
 import { printTable } from './printTable.ts'
 
-/** Interruptions in all, spread over so many sweeps; each sweep is then finished and compared byte by byte. */
+/** Interruptions in all; after every few the sweep is finished and compared byte by byte. */
 const INTERRUPTIONS = 200
 const PER_SWEEP = 10
 
@@ -44,7 +44,7 @@ afterAll(() => {
 type Way = 'SIGKILL' | 'SIGINT' | 'SIGTERM' | 'full disk' | 'exit' | 'throw' | 'memory'
 
 const WAYS: Way[] = ['SIGKILL', 'SIGINT', 'SIGTERM', 'full disk', 'exit', 'throw', 'memory']
-const tally: Record<string, { times: number; finished: number }> = {}
+const tally: Record<string, { times: number; 'too late': number }> = {}
 
 /** Exit codes that each way may end with; null is a process that was killed. 0 when it came too late. */
 const CODES: Record<Way, (number | null)[]> = {
@@ -61,7 +61,22 @@ function interrupted(way: Way, out: string): Promise<Ended> {
   if (way === 'full disk') return sweepOnFullDisk(place, out, Math.ceil(1 + 80 * random()))
   if (way === 'exit' || way === 'throw' || way === 'memory')
     return sweepWithCrashes(place, out, way, 0.05)
-  return sweepUntil(place, out, way, { milliseconds: whole_ms * random() })
+  const when =
+    random() < 0.5
+      ? { lines: Math.ceil(4 * random()) }
+      : { milliseconds: 0.7 * whole_ms * random() }
+  return sweepUntil(place, out, way, when)
+}
+
+/** Goes on with a sweep until it is done, compares its files and clears it away. */
+async function finish(out: string): Promise<void> {
+  const { code, stderr } = await sweep(place, '-o', out, '--retry')
+  expect(code, stderr).toBe(0)
+  expect(finalBytes(join(place, out))).toEqual(reference)
+  const hidden = readdirSync(join(place, out)).filter((name) => name.startsWith('.'))
+  // A killed process may leave what it was just writing under such a name; nothing else.
+  expect(hidden.filter((name) => !name.includes('.partial-'))).toEqual([])
+  rmSync(join(place, out), { recursive: true })
 }
 
 describe('a sweep that is interrupted again and again', () => {
@@ -74,18 +89,13 @@ describe('a sweep that is interrupted again and again', () => {
         const { code, stderr } = await interrupted(way, out)
         expect(CODES[way], `${way}: ${stderr}`).toContain(code)
         expect(linesIn(join(place, out))).toBeGreaterThanOrEqual(before)
-        tally[way] ??= { times: 0, finished: 0 }
+        tally[way] ??= { times: 0, 'too late': 0 }
         tally[way].times++
-        if (code === 0) tally[way].finished++
+        if (code !== 0) continue
+        tally[way]['too late']++
+        await finish(out)
       }
-      const { code, stderr } = await sweep(place, '-o', out, '--retry')
-      expect(code, stderr).toBe(0)
-      expect(finalBytes(join(place, out))).toEqual(reference)
-      const strangers = readdirSync(join(place, out)).filter((name) => name.startsWith('.'))
-      // A killed process may leave its unfinished final file; nothing else.
-      expect(strangers.filter((name) => !name.includes('.partial-'))).toEqual([])
-      expect(existsSync(join(place, out, 'study.json'))).toBe(true)
-      rmSync(join(place, out), { recursive: true })
+      await finish(out)
     },
   )
 })

@@ -22,7 +22,7 @@ export interface Captured {
 /** Runs a command line in this process and captures what it says. */
 export async function captured(
   words: string[],
-  places: { workingDirectory: string; scenarioDirectory: string },
+  places: { workingDirectory: string; scenarioDirectory: string; memberWorker?: string },
 ): Promise<Captured> {
   const stdout = collector()
   const stderr = collector()
@@ -34,6 +34,7 @@ export async function captured(
       calledAs: 'mesofrost',
     },
     scenarioDirectory: places.scenarioDirectory,
+    memberWorker: places.memberWorker ?? 'none',
     identity: { name: 'mesofrost', version: '1.2.3', model: 'none', libraries: {} },
     watchStopSignals: () => ({ signal: () => null, release() {} }),
   }

@@ -1,7 +1,8 @@
 import { type Data, Field, FixedSizeList, Float64, makeData, Utf8 } from 'apache-arrow'
 import type { TableField } from './tableField.ts'
 
-export type ColumnValues = ArrayLike<number | string>
+/** NaN among numbers and null among texts become null. */
+export type ColumnValues = ArrayLike<number | string | null>
 
 /** Rows of one column on their way into a batch. */
 export interface ColumnBuffer {
@@ -11,34 +12,44 @@ export interface ColumnBuffer {
   take(rows: number): Data
 }
 
-/** NaN is stored as null. */
+/** Which of the rows on their way have a value. */
+function validity(capacity: number) {
+  const bits = new Uint8Array(Math.ceil(capacity / 8))
+  return {
+    set(row: number, isValid: boolean) {
+      const bit = 1 << (row & 7)
+      if (isValid) bits[row >> 3] |= bit
+      else bits[row >> 3] &= ~bit
+    },
+    /** As Arrow wants it; without a bitmap where nothing is null. */
+    take(rows: number): { nullCount: number; nullBitmap?: Uint8Array } {
+      let present = 0
+      for (let row = 0; row < rows; row++) present += (bits[row >> 3] >> (row & 7)) & 1
+      const nullCount = rows - present
+      return nullCount === 0 ? { nullCount } : { nullCount, nullBitmap: maskedBitmap(bits, rows) }
+    },
+  }
+}
+
 function numberBuffer(capacity: number): ColumnBuffer {
   const numbers = new Float64Array(capacity)
-  const valid = new Uint8Array(Math.ceil(capacity / 8))
+  const valid = validity(capacity)
   return {
     put(values, first, count, at) {
       for (let row = 0; row < count; row++) {
         const value = values[first + row] as number
-        const bit = 1 << ((at + row) & 7)
         const isNull = Number.isNaN(value)
         numbers[at + row] = isNull ? 0 : value
-        if (isNull) valid[(at + row) >> 3] &= ~bit
-        else valid[(at + row) >> 3] |= bit
+        valid.set(at + row, !isNull)
       }
     },
-    take(rows) {
-      let present = 0
-      for (let row = 0; row < rows; row++) present += (valid[row >> 3] >> (row & 7)) & 1
-      const nullBitmap = maskedBitmap(valid, rows)
-      const nullCount = rows - present
-      return makeData({
+    take: (rows) =>
+      makeData({
         type: new Float64(),
         length: rows,
-        nullCount,
-        ...(nullCount > 0 ? { nullBitmap } : {}),
+        ...valid.take(rows),
         data: numbers.subarray(0, rows),
-      })
-    },
+      }),
   }
 }
 
@@ -51,9 +62,14 @@ function maskedBitmap(valid: Uint8Array, rows: number): Uint8Array {
 
 function textBuffer(capacity: number): ColumnBuffer {
   const texts: string[] = new Array(capacity).fill('')
+  const valid = validity(capacity)
   return {
     put(values, first, count, at) {
-      for (let row = 0; row < count; row++) texts[at + row] = values[first + row] as string
+      for (let row = 0; row < count; row++) {
+        const value = values[first + row] as string | null
+        texts[at + row] = value ?? ''
+        valid.set(at + row, value !== null)
+      }
     },
     take(rows) {
       const encoded = texts.slice(0, rows).map((text) => new TextEncoder().encode(text))
@@ -65,7 +81,13 @@ function textBuffer(capacity: number): ColumnBuffer {
       encoded.forEach((bytes, row) => {
         data.set(bytes, valueOffsets[row])
       })
-      return makeData({ type: new Utf8(), length: rows, nullCount: 0, valueOffsets, data })
+      return makeData({
+        type: new Utf8(),
+        length: rows,
+        ...valid.take(rows),
+        valueOffsets,
+        data,
+      })
     },
   }
 }

@@ -4,6 +4,8 @@ import type { Variable } from '../../model/diagnostics/variables.ts'
 /** One column of a table: a variable, and for a list column how many values each row holds. */
 export interface TableField extends Variable {
   listLength: number | null
+  /** Whether a text may be null, where it does not apply; numbers always may. */
+  nullableText?: boolean
 }
 
 /** Named texts that belong to a whole table, written in the order of their declaration. */
@@ -32,11 +34,12 @@ function fieldMetadata(field: TableField): Map<string, string> {
   return metadata
 }
 
-/** Numbers may be null, where a quantity does not apply; texts and lists never are. */
+/** Numbers may be null, where a quantity does not apply; texts only where so declared, lists never. */
 export function arrowSchema(fields: TableField[], metadata: TableMetadata): Schema {
   return new Schema(
     fields.map((field) => {
-      const nullable = field.type === 'number' && field.listLength === null
+      const isNumber = field.type === 'number' && field.listLength === null
+      const nullable = isNumber || field.nullableText === true
       return new Field(field.name, fieldType(field), nullable, fieldMetadata(field))
     }),
     new Map(metadata),

@@ -9,7 +9,7 @@ import {
 import { InputError } from '../../model/errors.ts'
 import { type TableField, tableField } from './tableField.ts'
 
-/** Some rows of a table: per column one value per row (null as NaN), or `listLength` values per row. */
+/** Some rows of a table: per column one value per row (null as NaN or empty text), or `listLength` values per row. */
 export interface TableRows {
   rows: number
   columns: Record<string, Float64Array | string[]>
@@ -46,7 +46,8 @@ function rowsOf(batch: RecordBatch, fields: TableField[]): TableRows {
   const columns: TableRows['columns'] = {}
   fields.forEach((field, i) => {
     const data = batch.data.children[i]
-    if (field.type === 'text') columns[field.name] = [...new Vector([data])]
+    if (field.type === 'text')
+      columns[field.name] = Array.from(new Vector([data]), (text) => text ?? '')
     else columns[field.name] = numbersOf(field.listLength === null ? data : data.children[0])
   })
   return { rows: batch.numRows, columns }

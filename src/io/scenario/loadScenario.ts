@@ -47,8 +47,8 @@ export function loadScenario(pathOrName: string, request: ScenarioRequest): Load
   })
 }
 
-/** Adds file, line and column to what the model has against a scenario. */
-function withPlaces<T>(placed: PlacedValue, judge: () => T): T {
+/** Adds file, line and column to what the model has against a scenario or a study. */
+export function withPlaces<T>(placed: PlacedValue, judge: () => T): T {
   try {
     return judge()
   } catch (error) {
