@@ -8,7 +8,7 @@
  * @returns both functions by n
  *
  * Source: recurrences of the spherical Bessel functions, textbook. Range: x from 1e-4 to 100 with an order up to
- * x + 4 x^(1/3) + 8; beyond, the unscaled recurrences may overflow.
+ * x + 4 x^(1/3) + 9; beyond, the unscaled recurrences may overflow.
  */
 export function riccatiBessel(x: number, order: number): { psi: Float64Array; eta: Float64Array } {
   const eta = new Float64Array(order + 1)
