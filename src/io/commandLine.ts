@@ -10,6 +10,7 @@ import { responseMapCommand } from './commands/responseMap.ts'
 import { runCommand } from './commands/run.ts'
 import { scenariosCommand } from './commands/scenarios.ts'
 import { schemaCommand } from './commands/schema.ts'
+import { scoreCommand } from './commands/score.ts'
 import { showCommand } from './commands/show.ts'
 import { sweepCommand } from './commands/sweep.ts'
 import { sweepGatherCommand } from './commands/sweepGather.ts'
@@ -25,6 +26,7 @@ const COMMANDS: Command[] = [
   sweepCommand,
   sweepGatherCommand,
   convergeCommand,
+  scoreCommand,
   checkCommand,
   scenariosCommand,
   showCommand,

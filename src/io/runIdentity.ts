@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import { isNeutral, timeEdges } from '../model/atmosphere/perturbation.ts'
 import type { Scenario } from '../model/scenario/types.ts'
 import type { Snapshot } from '../model/simulate.ts'
 import { canonicalJson } from './canonicalJson.ts'
@@ -14,9 +15,23 @@ export function runIdentity(
   model: ModelIdentity,
   from: Snapshot | null,
 ): string {
-  const { title: _, ...physics } = scenario
+  const { title: _, ...physics } = withoutNeutral(scenario)
   const start = from && { ...from, y: Array.from(from.y) }
   return createHash('sha256')
     .update(canonicalJson({ scenario: physics, model, start }))
     .digest('hex')
+}
+
+/** A perturbation that changes nothing is no more than the instants at which it would begin and end. */
+function withoutNeutral(scenario: Scenario): Scenario {
+  const { perturbations, numerics } = scenario
+  const edges = perturbations.filter(isNeutral).flatMap(({ time }) => timeEdges(time))
+  const breakPoints_s = [...new Set([...numerics.breakPoints_s, ...edges])]
+    .filter((time) => time > 0 && time < scenario.duration_s)
+    .sort((a, b) => a - b)
+  return {
+    ...scenario,
+    perturbations: perturbations.filter((change) => !isNeutral(change)),
+    numerics: { ...numerics, breakPoints_s },
+  }
 }

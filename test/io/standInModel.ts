@@ -108,6 +108,8 @@ export function standInScenario(changes: Partial<Scenario> = {}): LoadedScenario
     startUtc: null,
     grid: { levels: LEVELS },
     sizes: { classes: CLASSES },
+    perturbations: [],
+    numerics: { breakPoints_s: [] },
     ...changes,
   }
   const document = { output: { size_distribution: 'auto', state_every_h: 2 } }

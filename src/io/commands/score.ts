@@ -64,10 +64,14 @@ export const scoreCommand: Command = {
     ...outputOptions,
   },
   examples: [
-    ['mesofrost score mine.csv --truth observed/truth.arrow', 'bias, scatter and coverage'],
+    ['mesofrost score mine.csv --truth truth.arrow', 'bias, scatter and coverage'],
     [
-      'mesofrost score mine.csv --truth observed/truth.arrow --threshold column_ice_ug_per_m2=20 --bins column_ice_ug_per_m2=10,50,100',
-      'and how many clouds of 20 ug per m2 were found, and how well clouds of each size came out',
+      'mesofrost score mine.csv --truth truth.arrow --threshold column_ice_ug_per_m2=20',
+      'and how many of the clouds of 20 ug per m2 or more were found',
+    ],
+    [
+      'mesofrost score mine.csv --truth truth.arrow --bins column_ice_ug_per_m2=10,50,100',
+      'and how well thin and thick clouds came out',
     ],
   ],
   async run(args: CommandArguments, context: CommandContext): Promise<number> {

@@ -128,8 +128,9 @@ function sceneWarnings({ unknown, missing, duplicate }: SceneMatch): string[] {
 }
 
 function columnWarnings({ unscored }: CommonQuantities): string[] {
-  return unscored.map(({ name, nearest }) => {
-    const hint = nearest === null ? '' : `; did you mean ${nearest}?`
-    return `column ${name} of the estimates is not scored: the truth has no such quantity${hint}`
-  })
+  if (unscored.length === 0) return []
+  const names = unscored.map(({ name, nearest }) =>
+    nearest === null ? name : `${name} (did you mean ${nearest}?)`,
+  )
+  return [`not scored, since the truth has no such quantity: ${names.join(', ')}`]
 }

@@ -1,7 +1,16 @@
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { Dictionary, Int32, tableFromArrays, tableToIPC, Utf8, vectorFromArray } from 'apache-arrow'
+import {
+  Dictionary,
+  Float64,
+  Int32,
+  Table,
+  tableFromArrays,
+  tableToIPC,
+  Utf8,
+  vectorFromArray,
+} from 'apache-arrow'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { commonQuantities } from '../../../src/io/scoring/commonQuantities.ts'
 import { csvSceneTable } from '../../../src/io/scoring/csvSceneTable.ts'
@@ -46,9 +55,9 @@ describe('a table of scenes in CSV', () => {
   })
 
   it('needs the names of its scenes, and suggests what was meant', () => {
-    expect(() => sceneIds(csv('# mine', 'scene,a', 'x,1'))).toThrow(
+    expect(() => sceneIds(csv('# mine', 'scene_ids,a', 'x,1'))).toThrow(
       new InputError(
-        'mine.csv:2: no column scene_id; columns there: scene, a; did you mean scene?',
+        'mine.csv:2: no column scene_id; columns there: scene_ids, a; did you mean scene_ids?',
       ),
     )
     expect(() => sceneIds(csv('scene_id,a', 'x,1', ',2'))).toThrow(
@@ -60,7 +69,7 @@ describe('a table of scenes in CSV', () => {
     const table = csv('scene_id,a,a_uncertainty', 'x,1,0.1', 'y,high,-1')
     expect(() => numbersOf(table, 'a')).toThrow(
       new InputError(
-        "mine.csv:3: column a: 'high' is not allowed; allowed: a number, or nothing where there is none",
+        'mine.csv:3: column a: "high" is not allowed; allowed: a number, or nothing where there is none',
       ),
     )
     expect(() => numbersOf(table, 'a_uncertainty', 0)).toThrow(
@@ -87,13 +96,11 @@ describe('a table of scenes in Arrow', () => {
 
   it('is read with texts as a dictionary and with nulls', () => {
     const scene_id = vectorFromArray(['a', 'b', 'a'], new Dictionary(new Utf8(), new Int32()))
-    const value = vectorFromArray([1, null, 3])
-    writeFileSync(
-      join(place, 'words.arrow'),
-      tableToIPC(tableFromArrays({ scene_id: scene_id.toArray(), value: value.toArray() }), 'file'),
-    )
+    const value = vectorFromArray([1, null, 3], new Float64())
+    writeFileSync(join(place, 'words.arrow'), tableToIPC(new Table({ scene_id, value }), 'file'))
     const read = readSceneTable('words.arrow', 'estimates', place)
     expect(sceneIds(read)).toEqual(['a', 'b', 'a'])
+    expect([...numbersOf(read, 'value')]).toEqual([1, Number.NaN, 3])
   })
 
   it('is refused when it is cut off, and so is what is neither Arrow nor text', () => {

@@ -185,8 +185,7 @@ describe('mesofrost score', () => {
     expect(stderr).toContain('1 scene estimated but not among the truth: x\n')
     expect(stderr).toContain('2 scenes of the truth without a row of estimates: c, d\n')
     expect(stderr).toContain('1 scene estimated more than once, of which the first row counts: a\n')
-    expect(stderr).toContain('ice_ug_per_m of the estimates is not scored')
-    expect(stderr).toContain('did you mean ice_ug_per_m2?')
+    expect(stderr).toContain('no such quantity: ice_ug_per_m (did you mean ice_ug_per_m2?)\n')
   })
 
   it('takes several draws of a scene for what they are', async () => {
