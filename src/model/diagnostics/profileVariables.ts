@@ -71,6 +71,7 @@ const airProfiles: ProfileVariable[] = [
   profile(
     variable('wave_wind_m_per_s', 'vertical wind of the waves', 'm s-1', 'upward_air_velocity'),
     ({ column, basis, moment }) => {
+      if (column.scenario.waves.length === 0) return new Float64Array(column.grid.levels)
       const before = airAt(column, basis, moment.time_s - MOMENT)
       const after = airAt(column, basis, moment.time_s + MOMENT)
       return perLevel(
