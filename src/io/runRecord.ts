@@ -1,4 +1,12 @@
-import { closeSync, fsyncSync, openSync, readFileSync, writeSync } from 'node:fs'
+import {
+  closeSync,
+  existsSync,
+  fsyncSync,
+  openSync,
+  readdirSync,
+  readFileSync,
+  writeSync,
+} from 'node:fs'
 import { join } from 'node:path'
 import { InputError } from '../model/errors.ts'
 import type { ScenarioDocument } from '../model/scenario/schema.ts'
@@ -56,6 +64,18 @@ export function findRunRecord(path: string): RunRecord | null {
 export function readRunRecord(directory: string): RunRecord {
   const record = findRunRecord(join(directory, 'run.json'))
   if (record === null)
-    throw new InputError(`${directory} is not a run directory: it holds no run.json of mesofrost`)
+    throw new InputError(
+      `${directory} is not a run directory: it holds no run.json of mesofrost${otherTables(directory)}`,
+    )
   return record
+}
+
+/** The tables of an experiment, which may be what the user looks for. */
+function otherTables(directory: string): string {
+  const tables = existsSync(directory)
+    ? readdirSync(directory).filter((name) => name.endsWith('.arrow'))
+    : []
+  return tables.length === 0
+    ? ''
+    : `; it does hold ${tables.join(', ')}, each to be named by itself`
 }

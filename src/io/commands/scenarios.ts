@@ -22,13 +22,18 @@ export const scenariosCommand: Command = {
       await print(terminal, args.json ? `${JSON.stringify({ name, text })}\n` : text)
       return DONE
     }
+    const { shippedStudies } = await import('../study/loadStudy.ts')
     const scenarios = listShippedScenarios(scenarioDirectory)
-    if (args.json) await print(terminal, `${JSON.stringify({ scenarios })}\n`)
-    else
-      await print(
-        terminal,
-        pairLines(scenarios.map(({ name, title, question }) => [name, question || title])),
-      )
+    const studies = listShippedScenarios(shippedStudies(scenarioDirectory))
+    if (args.json) {
+      await print(terminal, `${JSON.stringify({ scenarios, studies })}\n`)
+      return DONE
+    }
+    const lines = (list: typeof scenarios) =>
+      pairLines(list.map(({ name, title, question }) => [name, question || title]))
+    await print(terminal, lines(scenarios))
+    if (studies.length > 0)
+      await print(terminal, `\nStudies for mesofrost sweep:\n${lines(studies)}`)
     return DONE
   },
 }

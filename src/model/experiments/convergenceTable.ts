@@ -28,6 +28,9 @@ type Verdict = ConvergenceRow['verdict']
  */
 const LEAST_ORDER = 0.5
 
+/** Relative changes below this are no more than the scatter of the solver, and judge nothing. */
+const NEGLIGIBLE = 1e-6
+
 /** Safety factors on the estimated error: of three grids in order, and of three that are not. Roache 1994, from memory. */
 const SAFE_IN_ORDER = 1.25
 const SAFE_OTHERWISE = 3
@@ -35,7 +38,8 @@ const SAFE_OTHERWISE = 3
 /**
  * The table of a convergence test, diagnostic by diagnostic. With d1 and d2 the changes of the first and second step and
  * f the factor between steps, the order is p = ln(d1/d2)/ln f and the error of the base |d1|/(1 - f^-p) (Richardson's
- * extrapolation), times 1.25. Where d1 and d2 differ in sign or do not shrink, 3 max(|d1|, |d2|) stands in.
+ * extrapolation), times 1.25. Where d1 and d2 differ in sign or do not shrink, 3 max(|d1|, |d2|) stands in. What is left
+ * of the budget after rounding is no diagnostic and left out.
  *
  * @param outcomes one per member of the plan, in its order; null where one is missing
  */
@@ -44,7 +48,9 @@ export function convergenceTable(
   outcomes: readonly (MemberOutcome | null)[],
 ): ConvergenceRow[] {
   const finished = outcomes.flatMap((outcome) => (outcome?.status === 'done' ? [outcome] : []))
-  const names = Object.keys(finished[0]?.diagnostics ?? {})
+  const names = Object.keys(finished[0]?.diagnostics ?? {}).filter(
+    (name) => !name.endsWith('_residual'),
+  )
   return names.flatMap((diagnostic) => {
     const rows = (Object.keys(REFINEMENT_FACTORS) as Refinement[]).map((refinement) => {
       const values = ([0, 1, 2] as const).map((step) => {
@@ -78,7 +84,7 @@ function judge(values: readonly (number | null | undefined)[], factor: number): 
   }
   const [first, second] = [once - base, twice - once]
   const order = Math.log(first / second) / Math.log(factor)
-  const isUnchanged = first === 0 && second === 0
+  const isUnchanged = Math.max(Math.abs(first), Math.abs(second)) <= NEGLIGIBLE * Math.abs(base)
   const isAsymptotic = order >= LEAST_ORDER && Number.isFinite(order)
   const error = isAsymptotic
     ? (SAFE_IN_ORDER * Math.abs(first)) / (1 - factor ** -order)

@@ -32,12 +32,35 @@ export type MemberResults = readonly (Readonly<Record<string, number | null>> | 
 export function sensitivityTable(plan: StudyPlan, results: MemberResults): SensitivityRow[] {
   switch (plan.design.kind) {
     case 'grid':
-      return gridSlopes(plan, results)
+      return gridSlopes(plan, withClouds(plan, results))
     case 'latin_hypercube':
-      return jointSlopes(plan, results)
+      return jointSlopes(plan, withClouds(plan, results))
     case 'sobol':
       return plan.diagnostics.flatMap((diagnostic) => varianceShares(plan, results, diagnostic))
   }
+}
+
+/** Members with less than this of the largest value of the study have no cloud to speak of. */
+const NO_CLOUD = 1e-6
+
+/** The results without what is no more than a trace: its logarithm would rule every slope. */
+function withClouds({ diagnostics }: StudyPlan, results: MemberResults): MemberResults {
+  const least = Object.fromEntries(
+    diagnostics.map((name): [string, number] => [
+      name,
+      results.reduce((most, member) => Math.max(most, member?.[name] ?? 0), 0) * NO_CLOUD,
+    ]),
+  )
+  return results.map(
+    (member) =>
+      member &&
+      Object.fromEntries(
+        Object.entries(member).map(([name, value]) => [
+          name,
+          value !== null && name in least && value < least[name] ? null : value,
+        ]),
+      ),
+  )
 }
 
 function varianceShares(

@@ -97,6 +97,17 @@ describe('the slopes of a grid', () => {
     expect(row.value).toBeCloseTo(2, 12)
   })
 
+  it('take a trace for no cloud', () => {
+    const made = plan(GRID)
+    const results = resultsOf(made, (parameters) =>
+      parameters['temperature.offset_K'] === 2 ? 1e-9 * law(parameters) : law(parameters),
+    )
+    const water = rowsOf(sensitivityTable(made, results), 'water.factor')
+    expect(water.map(({ left_out }) => left_out).reduce((a, b) => a + b, 0)).toBeGreaterThan(0)
+    expect(water[1]).toMatchObject({ value: null, used: 0, left_out: 4 })
+    expect(water[0].value).toBeCloseTo(1.7, 12)
+  })
+
   it('leave out and count what has no cloud or did not finish', () => {
     const made = plan(GRID)
     const results = resultsOf(made, (parameters) =>
