@@ -15,7 +15,8 @@ export function transportCores(
 ): void {
   const { y, dy, start, spacing_m, member } = state
   const perSpacing = 1 / spacing_m
-  let fluxBelow = carried[0] < 0 ? carried[0] * mix[member] : 0
+  // At the ends there is but one cell, whatever the sign that the solver's noise gives its ice.
+  let fluxBelow = carried[0] * mix[member]
   inflow.bottom = fluxBelow
   let lateral = 0
   for (let i = 0; i < levels; i++) {
@@ -23,9 +24,9 @@ export function transportCores(
     const next = cell + nucleusClasses
     const q = y[start + cell] * level.inverseDensity[i]
     const upward = carried[i + 1]
-    let flux = upward > 0 ? upward * mix[cell] : 0
-    if (i < levels - 1) {
-      if (upward < 0) flux = upward * mix[next]
+    const isInside = i < levels - 1
+    let flux = upward * mix[isInside && upward < 0 ? next : cell]
+    if (isInside) {
       flux -= face.eddy[i + 1] * (y[start + next] * level.inverseDensity[i + 1] - q)
     }
     const converged = q * level.lateral[i]

@@ -20,8 +20,9 @@ export function coreTransport(now: Situation, dy: Float64Array): void {
   const mix = Array.from({ length: levels }, (_, level) => coreMix(now, level))
   for (const cores of tracers.filter(({ kind }) => kind === 'cores')) {
     const flux = carried.map((upward, face) => {
-      const from = upward > 0 ? face - 1 : face
-      return upward === 0 ? 0 : upward * mix[from][cores.member]
+      // At the ends there is but one cell, whatever the sign that the solver's noise gives its ice.
+      const from = Math.min(Math.max(upward > 0 ? face - 1 : face, 0), levels - 1)
+      return upward * mix[from][cores.member]
     })
     addFluxes(now, cores, flux, dy)
   }
