@@ -30,7 +30,10 @@ export const runDefaults = {
 export const gridDefaults = {
   bottom_km: because(77, 'on an ordinary summer night ice sublimates well above it'),
   top_km: because(96, 'air above the mesopause region is too warm for ice'),
-  levels: because(128, 'cells of 150 m, an eighth of a usual layer'),
+  levels: because(
+    128,
+    'cells of 150 m: twice as many change the quiet brightness by less than 0.1 %, measured',
+  ),
 }
 
 export const sizeDefaults = {
@@ -38,12 +41,9 @@ export const sizeDefaults = {
   largest_nm: because(150, 'twice the largest radius seen in ordinary clouds'),
   classes: because(
     48,
-    'with stretching 3, brightness within about 0.5 % of finer classes in a trial',
+    'twice as many change the Rayleigh brightness of the quiet night by 2 % and that under a wave of an hour by 9 %, measured; take 96 there',
   ),
-  stretching: because(
-    3,
-    'a coarse small end (2) cost 4 to 6 % in brightness in a trial, 3 cost 0.5 %',
-  ),
+  stretching: because(3, 'fine where ice is born; 2 costs about 0.5 % in brightness, measured'),
 }
 
 export const pressureDefaults = {
