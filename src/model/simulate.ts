@@ -3,7 +3,7 @@ import { isNeutral } from './atmosphere/perturbation.ts'
 import { makeIntegrator, type SolverStatistics } from './integrate/integrate.ts'
 import type { Perturbation } from './scenario/types.ts'
 import type { Column } from './state/column.ts'
-import { initialState } from './state/initialState.ts'
+import { stateAtStart } from './state/initialState.ts'
 import { inject, rebase } from './state/jumps.ts'
 import { makeTendency } from './tendency/tendency.ts'
 
@@ -60,11 +60,7 @@ export function* simulate(
 
 /** The state at time zero: background air, initial ice, and what perturbations bring that hold from the start. */
 export function initialSnapshot(column: Column): Snapshot {
-  const { scenario, atmosphere } = column
-  const basis = atmosphere.basis(0)
-  const air = atmosphere.read(basis, 0, { from_s: 0, to_s: 0 })
-  const y = initialState(scenario, column, basis, air)
-  return { time_s: 0, y, stepSize_s: FIRST_STEP, basisTime_s: 0 }
+  return { time_s: 0, y: stateAtStart(column), stepSize_s: FIRST_STEP, basisTime_s: 0 }
 }
 
 export interface OutputInterval extends Interval {

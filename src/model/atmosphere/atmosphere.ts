@@ -42,6 +42,7 @@ export interface Atmosphere {
   breakPoints_s: number[]
   /** Instants at which the density is brought back to balance with a background that changes with time. */
   rebaseTimes_s: number[]
+  /** The latest is kept: asking for the same time again costs nothing. */
   basis(time_s: number): AirBasis
   /** The air at a time inside an interval. The record is reused by the next call. */
   read(basis: AirBasis, time_s: number, interval: Interval): AirState
@@ -60,8 +61,13 @@ export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphe
   }
   const restAt = (time_s: number) =>
     restingAir(profileCurve(background.temperature_K, time_s), reference, grid)
+  const basisAt = (time_s: number): AirBasis => {
+    const rest = restAt(time_s)
+    return { time_s, rest, waves: waveField(waves, rest, grid) }
+  }
+  let latest = basisAt(0)
   // Nuclei are given as a number density; the mixing ratio that it makes at the start is theirs for the whole run.
-  const startDensity_per_m3 = restAt(0).density_per_m3
+  const startDensity_per_m3 = latest.rest.density_per_m3
   return {
     steady:
       waves.length === 0 &&
@@ -70,8 +76,8 @@ export function makeAtmosphere(scenario: Scenario, grid: AltitudeGrid): Atmosphe
     breakPoints_s: breakPoints(scenario),
     rebaseTimes_s: rebaseTimes(scenario),
     basis(time_s) {
-      const rest = restAt(time_s)
-      return { time_s, rest, waves: waveField(waves, rest, grid) }
+      if (latest.time_s !== time_s) latest = basisAt(time_s)
+      return latest
     },
     read(basis, time_s, interval) {
       const changes = activeChanges(perturbations, weights, time_s, interval)

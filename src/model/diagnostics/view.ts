@@ -28,21 +28,12 @@ export interface View {
   altitude_m: Float64Array
 }
 
-interface Prepared {
-  light: LightTable[]
-  basis: AirBasis
-}
+/** Cross-sections of each column, so that a series of moments costs them once. */
+const lightTables = new WeakMap<Column, LightTable[]>()
 
-/** Tables and the latest basis of each column, so that a series of moments costs them once. */
-const prepared = new WeakMap<Column, Prepared>()
-
-function prepare(column: Column, basisTime_s: number): Prepared {
-  let known = prepared.get(column)
-  if (known === undefined || known.basis.time_s !== basisTime_s) {
-    const light = known?.light ?? makeLightTables(column)
-    known = { light, basis: column.atmosphere.basis(basisTime_s) }
-    prepared.set(column, known)
-  }
+function lightOf(column: Column): LightTable[] {
+  const known = lightTables.get(column) ?? makeLightTables(column)
+  lightTables.set(column, known)
   return known
 }
 
@@ -63,7 +54,8 @@ export function airAt(column: Column, basis: AirBasis, time_s: number): AirState
 
 export function viewColumn(column: Column, moment: ColumnMoment): View {
   const { grid, layout } = column
-  const { light, basis } = prepare(column, moment.basisTime_s)
+  const light = lightOf(column)
+  const basis = column.atmosphere.basis(moment.basisTime_s)
   const air = airAt(column, basis, moment.time_s)
   const numberPerClass = new Float64Array(layout.levels * layout.classes)
   for (let i = 0; i < layout.levels; i++) {

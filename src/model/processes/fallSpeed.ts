@@ -41,6 +41,6 @@ export function fallSpeed(conditions: FallConditions): number {
 }
 
 /** The slip correction over the Knudsen number in the free-molecular limit, A. */
-function freeLimit({ slip, dragDelta }: FallConditions): number {
+export function freeLimit({ slip, dragDelta }: Pick<FallConditions, 'slip' | 'dragDelta'>): number {
   return slip === 'davies' ? 1.257 + 0.4 : (VISCOSITY_FACTOR * 9) / (2 * dragDelta)
 }

@@ -1,5 +1,5 @@
 import { airDensity } from './airDensity.ts'
-import type { FallConditions } from './fallSpeed.ts'
+import { type FallConditions, freeLimit } from './fallSpeed.ts'
 import { VISCOSITY_FACTOR } from './meanFreePath.ts'
 import { meanMolecularSpeed } from './meanMolecularSpeed.ts'
 import { viscosity } from './viscosity.ts'
@@ -23,16 +23,16 @@ export interface FallSpeedSeries {
  * Source: series of the exponential in the slip correction (Davies 1945; Epstein 1924).
  */
 export function fallSpeedSeries(conditions: Omit<FallConditions, 'radius_m'>): FallSpeedSeries {
-  const { temperature_K, pressure_Pa, density, gravity, slip, dragDelta } = conditions
-  const freeLimit = slip === 'davies' ? 1.257 + 0.4 : (VISCOSITY_FACTOR * 9) / (2 * dragDelta)
-  const passage = freeLimit - 1.257
+  const { temperature_K, pressure_Pa, density, gravity } = conditions
+  const limit = freeLimit(conditions)
+  const passage = limit - 1.257
   const mu = viscosity(temperature_K)
   const path_m =
     mu /
     (VISCOSITY_FACTOR * airDensity(temperature_K, pressure_Pa) * meanMolecularSpeed(temperature_K))
   const stokes = (2 * density * gravity) / (9 * mu)
   return {
-    linear: stokes * path_m * freeLimit,
+    linear: stokes * path_m * limit,
     quadratic: stokes * (1 - 1.1 * passage),
     cubic: (stokes * 0.605 * passage) / path_m,
   }

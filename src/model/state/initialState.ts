@@ -55,10 +55,15 @@ function logNormalShares(
   return weights.map((weight) => weight / sum)
 }
 
-/** Column totals of the state at time zero. */
-export function totalsAtStart(column: PreparedColumn): ColumnTotals {
+/** The state at time zero of a column with its air. */
+export function stateAtStart(column: PreparedColumn): Float64Array {
   const { atmosphere, scenario } = column
   const basis = atmosphere.basis(0)
   const air = atmosphere.read(basis, 0, { from_s: 0, to_s: 0 })
-  return columnTotals(initialState(scenario, column, basis, air), column)
+  return initialState(scenario, column, basis, air)
+}
+
+/** Column totals of the state at time zero. */
+export function totalsAtStart(column: PreparedColumn): ColumnTotals {
+  return columnTotals(stateAtStart(column), column)
 }
