@@ -32,15 +32,15 @@ export interface Command {
   run(args: CommandArguments, context: CommandContext): Promise<number>
 }
 
-export const setOption: Options = {
-  type: 'array',
-  string: true,
-  nargs: 1,
-  default: [],
-  defaultDescription: 'none',
-  describe:
-    'path=value: override a key of the scenario, such as temperature.offset_K=2; repeatable',
+/** An option that may be given several times, a word each. */
+export function repeatableOption(describe: string, defaultDescription = 'none'): Options {
+  const form = { type: 'array', string: true, nargs: 1, default: [] } as const
+  return { ...form, defaultDescription, describe: `${describe}; repeatable` }
 }
+
+export const setOption = repeatableOption(
+  'path=value: override a key of the scenario, such as temperature.offset_K=2',
+)
 
 export const jsonOption: Options = {
   type: 'boolean',

@@ -1,3 +1,4 @@
+import { progressBar } from './progressBar.ts'
 import type { Terminal } from './terminal.ts'
 import { formatTime } from './timeText.ts'
 
@@ -13,7 +14,6 @@ export interface ProgressRange {
 }
 
 const PLAIN_INTERVAL_MS = 10_000
-const BAR_INTERVAL_MS = 100
 
 export const silentProgress: RunProgress = { reach() {}, end() {} }
 
@@ -34,17 +34,7 @@ async function barProgress(
   terminal: Terminal,
   { start_s, end_s }: ProgressRange,
 ): Promise<RunProgress> {
-  const { default: cliProgress } = await import('cli-progress')
-  const bar = new cliProgress.SingleBar({
-    format: '{bar} {hours} of {total_hours} h, {eta_formatted} to go',
-    stream: terminal.stderr,
-    fps: 1000 / BAR_INTERVAL_MS,
-    hideCursor: null,
-    clearOnComplete: true,
-    gracefulExit: false,
-    barCompleteChar: '#',
-    barIncompleteChar: '.',
-  })
+  const bar = await progressBar(terminal, '{bar} {hours} of {total_hours} h, {eta_formatted} to go')
   const total_hours = (end_s / 3600).toFixed(1)
   bar.start(end_s - start_s, 0, { hours: (start_s / 3600).toFixed(1), total_hours })
   return {

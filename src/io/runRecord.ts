@@ -1,16 +1,9 @@
-import {
-  closeSync,
-  existsSync,
-  fsyncSync,
-  openSync,
-  readdirSync,
-  readFileSync,
-  writeSync,
-} from 'node:fs'
+import { existsSync, readdirSync, readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { InputError } from '../model/errors.ts'
 import type { ScenarioDocument } from '../model/scenario/schema.ts'
 import type { ModelIdentity } from './modelIdentity.ts'
+import { writeWholeFile } from './writeWholeFile.ts'
 
 export const RUN_FORMAT = 'mesofrost-run'
 
@@ -40,15 +33,7 @@ export interface RunRecord {
 }
 
 export function writeRunRecord(directory: string, record: RunRecord): void {
-  const bytes = Buffer.from(`${JSON.stringify(record, null, 2)}\n`)
-  const descriptor = openSync(join(directory, 'run.json'), 'w')
-  try {
-    for (let written = 0; written < bytes.length; )
-      written += writeSync(descriptor, bytes, written, bytes.length - written)
-    fsyncSync(descriptor)
-  } finally {
-    closeSync(descriptor)
-  }
+  writeWholeFile(join(directory, 'run.json'), `${JSON.stringify(record, null, 2)}\n`, 'w')
 }
 
 /** The run record in a file; null when the file holds something else. */

@@ -4,6 +4,7 @@ import {
   type CommandContext,
   experimentArguments,
   experimentOptions,
+  repeatableOption,
   scenarioPositional,
   setOption,
 } from '../command.ts'
@@ -14,15 +15,9 @@ export const perturbCommand: Command = {
   describe: 'run a scenario without and with a change and tell the response',
   positionals: { scenario: { ...scenarioPositional, demandOption: true } },
   options: {
-    change: {
-      type: 'array',
-      string: true,
-      nargs: 1,
-      default: [],
-      defaultDescription: 'none',
-      describe:
-        'QUANTITY:AMOUNT[@Z1..Z2km][@T1..T2h] with temperature, water, wind, mixing or nuclei, at fixed air density; or a YAML or JSON file with a list of perturbations; repeatable',
-    },
+    change: repeatableOption(
+      'QUANTITY:AMOUNT[@Z1..Z2km][@T1..T2h] with temperature, water, wind, mixing or nuclei, at fixed air density; or a YAML or JSON file with a list of perturbations',
+    ),
     set: setOption,
     ...experimentOptions,
   },

@@ -5,6 +5,7 @@ import {
   countArgument,
   experimentArguments,
   experimentOptions,
+  repeatableOption,
 } from '../command.ts'
 
 /** Enough for the ends of a 95 % interval to two digits (common practice, no source). */
@@ -32,23 +33,10 @@ export const scoreCommand: Command = {
       demandOption: true,
       describe: 'table of the truth (Arrow or CSV), one row per scene_id',
     },
-    threshold: {
-      type: 'array',
-      string: true,
-      nargs: 1,
-      default: [],
-      defaultDescription: 'none',
-      describe:
-        'QUANTITY=VALUE: count hits and false alarms, an event being a value that reaches this one; repeatable',
-    },
-    bins: {
-      type: 'array',
-      string: true,
-      nargs: 1,
-      default: [],
-      defaultDescription: 'quartiles',
-      describe: 'QUANTITY=A,B,C: limits between bins of the true value; repeatable',
-    },
+    threshold: repeatableOption(
+      'QUANTITY=VALUE: count hits and false alarms, an event being a value that reaches this one',
+    ),
+    bins: repeatableOption('QUANTITY=A,B,C: limits between bins of the true value', 'quartiles'),
     seed: {
       type: 'string',
       requiresArg: true,

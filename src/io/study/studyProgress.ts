@@ -1,3 +1,4 @@
+import { progressBar } from '../progressBar.ts'
 import type { Terminal } from '../terminal.ts'
 
 /** Tells the user how far a study is. */
@@ -8,7 +9,6 @@ export interface StudyProgress {
 }
 
 const PLAIN_INTERVAL_MS = 10_000
-const BAR_INTERVAL_MS = 100
 
 export const silentStudyProgress: StudyProgress = { count() {}, end() {} }
 
@@ -60,21 +60,11 @@ function plainProgress({ stderr }: Terminal, total: number, already: number): St
 }
 
 async function barProgress(
-  { stderr }: Terminal,
+  terminal: Terminal,
   total: number,
   already: number,
 ): Promise<StudyProgress> {
-  const { default: cliProgress } = await import('cli-progress')
-  const bar = new cliProgress.SingleBar({
-    format: '{bar} {state}',
-    stream: stderr,
-    fps: 1000 / BAR_INTERVAL_MS,
-    hideCursor: null,
-    clearOnComplete: true,
-    gracefulExit: false,
-    barCompleteChar: '#',
-    barIncompleteChar: '.',
-  })
+  const bar = await progressBar(terminal, '{bar} {state}')
   const start = performance.now()
   let fresh = 0
   const state = () =>

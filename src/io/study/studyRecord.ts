@@ -1,11 +1,12 @@
 import { createHash, randomBytes } from 'node:crypto'
-import { closeSync, fsyncSync, linkSync, openSync, readFileSync, rmSync, writeSync } from 'node:fs'
+import { linkSync, readFileSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
 import { InputError } from '../../model/errors.ts'
 import type { Study } from '../../model/experiments/study.ts'
 import type { ScenarioDocument } from '../../model/scenario/schema.ts'
 import { canonicalJson } from '../canonicalJson.ts'
 import type { ModelIdentity } from '../modelIdentity.ts'
+import { writeWholeFile } from '../writeWholeFile.ts'
 
 export const STUDY_FORMAT = 'mesofrost-study'
 export const STUDY_FILE = 'study.json'
@@ -72,34 +73,23 @@ export function readStudyRecord(directory: string): StudyRecord {
 /** Names beside which study.json is being made by some process. */
 export const STUDY_FILE_PARTIAL = `.${STUDY_FILE}.partial-`
 
-function writeWhole(path: string, bytes: Buffer): void {
-  const descriptor = openSync(path, 'wx')
-  try {
-    for (let written = 0; written < bytes.length; )
-      written += writeSync(descriptor, bytes, written, bytes.length - written)
-    fsyncSync(descriptor)
-  } finally {
-    closeSync(descriptor)
-  }
-}
-
 /**
  * Creates study.json unless there is one: of many processes that try at once, one succeeds, and no process ever sees
  * half a file. Returns whether it was this one.
  */
 export function createStudyRecord(directory: string, record: StudyRecord): boolean {
-  const bytes = Buffer.from(`${JSON.stringify(record, null, 2)}\n`)
+  const text = `${JSON.stringify(record, null, 2)}\n`
   const partial = join(directory, STUDY_FILE_PARTIAL + randomBytes(4).toString('hex'))
   const path = join(directory, STUDY_FILE)
   try {
-    writeWhole(partial, bytes)
+    writeWholeFile(partial, text, 'wx')
     linkSync(partial, path)
     return true
   } catch (error) {
     const { code = '' } = error as NodeJS.ErrnoException
     if (code === 'EEXIST') return false
     if (!WITHOUT_LINKS.includes(code)) throw error
-    return createWithoutLink(path, bytes)
+    return createWithoutLink(path, text)
   } finally {
     rmSync(partial, { force: true })
   }
@@ -108,9 +98,9 @@ export function createStudyRecord(directory: string, record: StudyRecord): boole
 /** What file systems say that know no links. */
 const WITHOUT_LINKS = ['EPERM', 'ENOSYS', 'ENOTSUP', 'EOPNOTSUPP']
 
-function createWithoutLink(path: string, bytes: Buffer): boolean {
+function createWithoutLink(path: string, text: string): boolean {
   try {
-    writeWhole(path, bytes)
+    writeWholeFile(path, text, 'wx')
     return true
   } catch (error) {
     if ((error as NodeJS.ErrnoException).code === 'EEXIST') return false
